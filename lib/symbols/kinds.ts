@@ -47,7 +47,17 @@ export type Cost = { terms: number; digits: number };
 
 export type Rule = { says: string; holds: boolean };
 
-export type EvidenceTerm = { k: number; numerator: string; denominators: string[]; value: string };
+/**
+ * One term of the sum. numerator over denominators (factorials) is the term as published; value is the whole number after
+ * multiplication by A! B! C!, which is (−1)^k times the product of the binomials.
+ */
+export type EvidenceTerm = {
+  k: number;
+  numerator: string;
+  denominators: string[];
+  binomials: { over: number; under: number; value: string }[];
+  value: string;
+};
 
 /** Everything that a person needs to redo the value with pencil and paper; plain data, fit for JSON. */
 export type Evidence = {
@@ -57,9 +67,8 @@ export type Evidence = {
   /** The 3×3 square of integers whose rows and columns all add up to `sum`; null when a selection rule fails. */
   reggeSquare: number[][] | null;
   sum: number | null;
-  /** The integer terms of the sum; `numerator` and `denominators` are those of the formula's k-th term before it is made whole. */
   terms: EvidenceTerm[];
-  /** Given instead of the middle terms when there are more than a stated number of them. */
+  /** Given instead of the terms when there are more than a stated number of them. */
   summary: { count: number; first: EvidenceTerm; last: EvidenceTerm; largest: EvidenceTerm } | null;
   total: string;
   /** The number under the root, in primes. */
