@@ -124,6 +124,8 @@ async function settledVersions(claimIds: string[], transaction: Transaction): Pr
     include: [
       { model: Settlement, as: "settlements", attributes: [], where: { activeFlagId: { [Op.not]: null } }, required: true },
     ],
+    // A locking read sees what was committed while this transaction waited for the claims.
+    lock: transaction.LOCK.SHARE,
     transaction,
   });
   return new Set(flags.map(({ claimId, claimVersion }) => `${claimId} ${claimVersion}`));
