@@ -15,7 +15,7 @@ export const metadata: Metadata = {
   title: { default: "Surdmark", template: "%s · Surdmark" },
   description:
     "Recomputes the angular-momentum coupling coefficients of an answer key exactly, says how a wrong one came to be wrong, and freezes a verified key for print.",
-  icons: { icon: { url: "/mark.svg", type: "image/svg+xml" } },
+  icons: { icon: { url: "/icon.svg", type: "image/svg+xml" } },
   robots: { index: false, follow: false },
 };
 
