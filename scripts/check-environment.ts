@@ -6,3 +6,4 @@ try {
   console.error(error.message);
   process.exit(1);
 }
+export {};

@@ -94,7 +94,7 @@ async function startAll(folder, { dev, showLogs, fail }) {
     await step("Settings", () => checkSettings(runScript, folder.log("settings")));
   if (!dev)
     await step("Build", () =>
-      requireBuild(ROOT, ".next", { ...env, SURDMARK_PROCESS: "build" }, folder.log("build")),
+      requireBuild(ROOT, ".next", { ...env, SKIP_TYPES: "1" }, folder.log("build")),
     );
 
   const changed = () => remember(folder, env.APP_URL, keepers);
