@@ -16,7 +16,9 @@ export async function beforeFirstRequest(): Promise<void> {
     (error: unknown) => refuse(error instanceof Error ? error.message : String(error)),
   );
   if (env.NODE_ENV !== "production") return;
-  const faults = await durabilityFaults(env.DATABASE_URL);
+  const faults = await durabilityFaults(env.DATABASE_URL).catch((error: unknown) =>
+    refuse(`MariaDB's settings could not be read: ${error instanceof Error ? error.message : String(error)}`),
+  );
   if (faults.length > 0) refuse(faults.join("\n"));
 }
 

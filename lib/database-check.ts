@@ -4,7 +4,7 @@ type Settings = {
   flush: number | string;
   doublewrite: number | string;
   mode: string;
-  infile: number | string;
+  files: number | string;
 };
 
 const isOff = (value: number | string) => value === "OFF" || Number(value) === 0;
@@ -25,7 +25,7 @@ export async function durabilityFaults(databaseUrl: string): Promise<string[]> {
   if (connection === null) return [];
   try {
     const [row] = await connection.query<Settings[]>(
-      "select @@innodb_flush_log_at_trx_commit flush, @@innodb_doublewrite doublewrite, @@global.sql_mode mode, @@local_infile infile",
+      "select @@innodb_flush_log_at_trx_commit flush, @@innodb_doublewrite doublewrite, @@global.sql_mode mode, @@local_infile files",
     );
     return row === undefined ? [] : faultsOf(row);
   } finally {
@@ -34,7 +34,7 @@ export async function durabilityFaults(databaseUrl: string): Promise<string[]> {
 }
 
 /** The sentences for one server's settings. */
-export function faultsOf({ flush, doublewrite, mode, infile }: Settings): string[] {
+export function faultsOf({ flush, doublewrite, mode, files }: Settings): string[] {
   const faults: string[] = [];
   if (![1, 3].includes(Number(flush)))
     faults.push(
@@ -46,7 +46,7 @@ export function faultsOf({ flush, doublewrite, mode, infile }: Settings): string
     faults.push(
       "MariaDB's sql_mode is not strict, so values could be cut short unnoticed: add STRICT_TRANS_TABLES.",
     );
-  if (!isOff(infile))
+  if (!isOff(files))
     faults.push("MariaDB's local_infile is on, which lets a statement read files: set it to OFF.");
   return faults;
 }

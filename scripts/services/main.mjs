@@ -93,9 +93,7 @@ async function startAll(folder, { dev, showLogs, fail }) {
   if (isConfigured(process.env))
     await step("Settings", () => checkSettings(runScript, folder.log("settings")));
   if (!dev)
-    await step("Build", () =>
-      requireBuild(ROOT, ".next", { ...env, SKIP_TYPES: "1" }, folder.log("build")),
-    );
+    await step("Build", () => requireBuild(ROOT, ".next", { ...env, SKIP_TYPES: "1" }, folder.log("build")));
 
   const changed = () => remember(folder, env.APP_URL, keepers);
   const keep = (name, child, begin, log) => {
