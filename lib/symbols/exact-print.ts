@@ -83,7 +83,7 @@ function termFactors(
     above.push(...whole(n), ...surd, ...powerOfPi(term.pi, script));
     below.push(...whole(d), ...powerOfPi(-term.pi, script));
   }
-  if (term.i) above.unshift("i");
+  if (term.i) above.splice(/^\d/.test(above[0] ?? "") ? 1 : 0, 0, "i"); // 2i√3: after the number, before the root
   return { negative: s < 0n, above, below };
 }
 

@@ -72,7 +72,10 @@ export const ELEMENTS: readonly Element[] = TOPS.flatMap((top) => {
         columnSentence(columns),
         swapped ? "All projections change sign" : "",
       ].filter(Boolean);
-      const does = sentences.length === 0 ? "The symbol as it is." : `${sentences.map((s, n) => (n === 0 ? s : s.charAt(0).toLowerCase() + s.slice(1))).join("; then ")}.`;
+      const does =
+        sentences.length === 0
+          ? "The symbol as it is."
+          : `${sentences.map((s, n) => (n === 0 ? s : s.charAt(0).toLowerCase() + s.slice(1))).join("; then ")}.`;
       return {
         name: names.join(", ") || "identity",
         does,

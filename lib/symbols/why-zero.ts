@@ -141,7 +141,10 @@ function parityReason(q: Quantity, entries: ThreeJ): VanishingReason | null {
       : square !== null && applyElement(e, square).every((n, k) => n === square[k]);
   const odd = BY_SIMPLICITY.find((e) => phaseOf(e, sum) === -1 && fixes(e));
   if (!odd) return null;
-  const read = q.kind === "3j" ? "" : `This is the 3j symbol ${quantityText(quantityOf("3j", entries))} times a factor. `;
+  const read =
+    q.kind === "3j"
+      ? ""
+      : `This is the 3j symbol ${quantityText(quantityOf("3j", entries))} times a factor. `;
   const sumName = NAMES["3j"].j.join("+");
   return {
     rule: odd.classical ? "parity" : "regge-parity",
