@@ -1,18 +1,17 @@
 import { existsSync, mkdirSync, readdirSync, writeFileSync } from "node:fs";
 import path from "node:path";
-import { setTimeout as sleep } from "node:timers/promises";
 import { isFree, lock, openFolder, privatePort, remember, secrets } from "./folder.mjs";
 import { mariadb } from "./mariadb.mjs";
 import { packagesMatch, requireBuild, requirePackages } from "./packages.mjs";
-import { lastLines, retire, run, start, stopAll, supervise } from "./processes.mjs";
+import { lastLines, retire, stopAll, supervise } from "./processes.mjs";
+import { productProcesses, runScript, untilHealthy } from "./product.mjs";
 import { redis } from "./redis.mjs";
 import { explain, Fault, step } from "./report.mjs";
 import { requireSpace, requireTools } from "./requirements.mjs";
 import { isConfigured, isDemo, loadDotenv, portOf, processEnvironment } from "./settings.mjs";
+import { endWithParent } from "./signals.mjs";
 
 const ROOT = path.resolve(import.meta.dirname, "../..");
-const NEXT = path.join(ROOT, "node_modules/next/dist/bin/next");
-const TSX = ["--import", "tsx"];
 
 /** Everything that runs, in the order it was started. */
 const keepers = [];
@@ -87,11 +86,10 @@ async function startAll(folder, { dev, showLogs, fail }) {
     },
   });
   const script = (name) => path.join(ROOT, "scripts", name);
-  const runScript = (name, args, log, extra = {}) =>
-    run(process.execPath, [...TSX, script(name), ...args], { cwd: ROOT, env: { ...env, ...extra }, log });
+  const runTool = (name, args, log, extra = {}) =>
+    runScript(ROOT, name, args, { env: { ...env, ...extra }, log });
 
-  if (isConfigured(process.env))
-    await step("Settings", () => checkSettings(runScript, folder.log("settings")));
+  if (isConfigured(process.env)) await step("Settings", () => checkSettings(runTool, folder.log("settings")));
   if (!dev)
     await step("Build", () => requireBuild(ROOT, ".next", { ...env, SKIP_TYPES: "1" }, folder.log("build")));
 
@@ -135,33 +133,30 @@ async function startAll(folder, { dev, showLogs, fail }) {
 
   if (existsSync(script("migrate.ts")))
     await step("Tables", async () => {
-      const owner = database ? { DATABASE_URL: database.url("surdmark_owner", secret.databaseOwner) } : {};
-      if (database && (await isMigrated(database))) return "up to date";
-      await runScript("migrate.ts", ["up"], folder.log("migrate"), owner).catch((error) => {
-        throw new Fault(
-          `The tables could not be brought up to date (the whole output is in ${folder.log("migrate")}).\n${error.message}`,
-        );
-      });
+      const current = database !== null && (await isMigrated(database));
+      if (!current) {
+        const owner = database ? { DATABASE_URL: database.url("surdmark_owner", secret.databaseOwner) } : {};
+        await runTool("migrate.ts", ["up"], folder.log("migrate"), owner).catch((error) => {
+          throw new Fault(
+            `The tables could not be brought up to date (the whole output is in ${folder.log("migrate")}).\n${error.message}`,
+          );
+        });
+      }
       if (database) await database.grant();
-      return "brought up to date";
+      return current ? "up to date" : "brought up to date";
     });
 
   if (ownMail) {
     mkdirSync(mailFolder, { recursive: true, mode: 0o700 });
-    const begin = () =>
-      start(process.execPath, [...TSX, script("mail-server.ts")], {
-        cwd: ROOT,
-        env: { ...env, SURDMARK_PROCESS: "mail" },
-        log: folder.log("mail"),
-      });
-    keep("The mail server", begin(), begin, folder.log("mail"));
+    const mail = productProcesses(ROOT, folder, env).find(({ name }) => name === "The mail server");
+    keep(mail.name, mail.begin(), mail.begin, mail.log);
   }
 
   const seeding = demo && existsSync(script("seed.ts"));
   const seeded = database?.mark("seeded");
   if (seeding && !(seeded && existsSync(seeded)))
     await step("Demo work", async () => {
-      await runScript("seed.ts", [], folder.log("seed")).catch((error) => {
+      await runTool("seed.ts", [], folder.log("seed")).catch((error) => {
         throw new Fault(
           `The demo work could not be made (the whole output is in ${folder.log("seed")}).\n${error.message}`,
         );
@@ -170,30 +165,21 @@ async function startAll(folder, { dev, showLogs, fail }) {
       return "made";
     });
 
-  const web = webCommand(dev, port);
-  const worker = dev
-    ? [path.join(ROOT, "node_modules/tsx/dist/cli.mjs"), "watch", "--clear-screen=false", "workers/index.ts"]
-    : [...TSX, "workers/index.ts"];
   await step("Web, worker", async () => {
-    const logOf = (name) => (showLogs || dev ? undefined : folder.log(name));
-    const process_ = (name, args) => () =>
-      start(process.execPath, args, { cwd: ROOT, env: { ...env, SURDMARK_PROCESS: name }, log: logOf(name) });
-    const hasWorker = existsSync(path.join(ROOT, "workers/index.ts"));
-    const beginWeb = process_("web", web);
-    const beginWorker = process_("worker", worker);
-    keep("The web server", beginWeb(), beginWeb, logOf("web"));
-    if (hasWorker) keep("The worker", beginWorker(), beginWorker, logOf("worker"));
-    await untilHealthy(port, hasWorker, dev ? 180 : 60, folder);
+    for (const { name, begin, log } of productProcesses(ROOT, folder, env, { dev, showLogs, mail: false }))
+      keep(name, begin(), begin, log);
+    const withWorker = existsSync(path.join(ROOT, "workers/index.ts"));
+    await untilHealthy(env, { withWorker, seconds: dev ? 180 : 60, folder, given: () => ending !== null });
     return "healthy";
   });
 
   announce(folder, env, { demo, ownMail, mailFolder, dev, since });
-  if (!demo && existsSync(script("first-administrator.ts"))) await runScript("first-administrator.ts", []);
+  if (!demo && existsSync(script("first-administrator.ts"))) await runTool("first-administrator.ts", []);
 }
 
 /** Judges the whole environment at once, before anything waits for it. */
-async function checkSettings(runScript, log) {
-  await runScript("check-environment.ts", [], log).catch(() => {
+async function checkSettings(runTool, log) {
+  await runTool("check-environment.ts", [], log).catch(() => {
     throw new Fault(
       `These settings are wrong; set them in the environment or in .env and start again:\n${lastLines(log)}`,
     );
@@ -201,41 +187,11 @@ async function checkSettings(runScript, log) {
   return "sound";
 }
 
-const webCommand = (dev, port) => {
-  const host = process.env.LISTEN_HOST ? ["-H", process.env.LISTEN_HOST] : [];
-  return [NEXT, dev ? "dev" : "start", "-p", String(port), ...host];
-};
-
 /** Whether each migration file has been applied, asked without starting the program that applies them. */
 async function isMigrated(database) {
   const files = readdirSync(path.join(ROOT, "migrations")).filter((name) => name.endsWith(".ts"));
   const applied = await database.applied();
   return files.every((name) => applied.has(name) || applied.has(name.replace(/\.ts$/, "")));
-}
-
-/** Waits until web, database, Redis and worker all answer. @throws Fault saying which did not */
-async function untilHealthy(port, withWorker, seconds, folder) {
-  const host =
-    process.env.LISTEN_HOST && !/^(0\.0\.0\.0|::)$/.test(process.env.LISTEN_HOST)
-      ? process.env.LISTEN_HOST
-      : "127.0.0.1";
-  const until = Date.now() + seconds * 1000;
-  let last = "no answer";
-  while (Date.now() < until && ending === null) {
-    try {
-      const answer = await fetch(`http://${host}:${port}/api/health`, { signal: AbortSignal.timeout(5_000) });
-      const body = await answer.json();
-      if (answer.ok && (!withWorker || body.worker?.ok)) return;
-      last = JSON.stringify(body);
-    } catch (error) {
-      last = error.cause?.code ?? error.message;
-    }
-    await sleep(100);
-  }
-  if (ending !== null) return;
-  throw new Fault(
-    `The product did not become healthy within ${seconds} seconds (${last}): see the ends of ${folder.log("web")} and ${folder.log("worker")}.`,
-  );
 }
 
 function announce(folder, env, { demo, ownMail, mailFolder, since }) {
@@ -274,11 +230,4 @@ async function shutDown(folder, code) {
   await stopAll(1_000);
   if (keepers.length > 0) folder.remove("running.json");
   process.exit(code);
-}
-
-/** npm does not always pass on how it ended; when it is gone, so are we. */
-function endWithParent(end) {
-  if (!process.env.npm_lifecycle_event) return;
-  const parent = process.ppid;
-  setInterval(() => process.ppid !== parent && end(), 500).unref();
 }

@@ -49,6 +49,7 @@ export async function startTestServers(at, root) {
     redisUrl: bell.url,
     server,
     bell,
+    keepers: kept,
     stop,
   };
 }
