@@ -1,0 +1,85 @@
+import { EXACT_TEXT, ID, TABLE, WORD } from "./shared/columns";
+import { dropTables, statements, type Migration } from "./shared/statements";
+
+/** Runs, their findings, and the outbox that the workers are rung from. */
+export const up = ({ context }: Migration) =>
+  statements(context, [
+    `CREATE TABLE runs (
+      id ${ID} NOT NULL PRIMARY KEY,
+      work_id ${ID} NOT NULL,
+      chapter_id ${ID} NULL,
+      started_by_id ${ID} NOT NULL,
+      state ${WORD} NOT NULL DEFAULT 'queued',
+      conventions_version INT NOT NULL,
+      engine VARCHAR(40) NOT NULL,
+      total INT NOT NULL,
+      batches INT NOT NULL,
+      started_at DATETIME(3) NULL,
+      ended_at DATETIME(3) NULL,
+      created_at DATETIME(3) NOT NULL,
+      UNIQUE KEY runs_of_work (id, work_id),
+      KEY runs_work (work_id, created_at),
+      KEY runs_chapter (chapter_id, created_at),
+      KEY runs_state (state, created_at),
+      CONSTRAINT runs_work_fk FOREIGN KEY (work_id) REFERENCES works (id),
+      CONSTRAINT runs_chapter_fk FOREIGN KEY (chapter_id, work_id) REFERENCES chapters (id, work_id),
+      CONSTRAINT runs_starter_fk FOREIGN KEY (started_by_id) REFERENCES users (id),
+      CONSTRAINT runs_sheet_fk FOREIGN KEY (work_id, conventions_version) REFERENCES conventions_sheets (work_id, version),
+      CONSTRAINT runs_state_known CHECK (state IN ('queued', 'running', 'ended', 'cancelled')),
+      CONSTRAINT runs_counted CHECK (total >= 0 AND batches >= 0)
+    ) ${TABLE}`,
+    `CREATE TABLE findings (
+      id ${ID} NOT NULL PRIMARY KEY,
+      work_id ${ID} NOT NULL,
+      chapter_id ${ID} NOT NULL,
+      run_id ${ID} NOT NULL,
+      claim_id ${ID} NOT NULL,
+      claim_version INT NOT NULL,
+      batch INT NOT NULL,
+      attempts INT NOT NULL DEFAULT 0,
+      verdict ${WORD} NULL,
+      exact_text TEXT ${EXACT_TEXT} NULL,
+      exact_latex TEXT ${EXACT_TEXT} NULL,
+      exact_decimal VARCHAR(60) NULL,
+      slips LONGTEXT NULL,
+      reason TEXT NULL,
+      details LONGTEXT NULL,
+      evidence LONGTEXT NULL,
+      orbit_key VARCHAR(191) CHARACTER SET ascii COLLATE ascii_bin NULL,
+      judged_at DATETIME(3) NULL,
+      created_at DATETIME(3) NOT NULL,
+      UNIQUE KEY findings_claim_once (run_id, claim_id),
+      UNIQUE KEY findings_of_claim (id, claim_id),
+      KEY findings_batch (run_id, batch, verdict),
+      KEY findings_verdict (run_id, verdict, judged_at),
+      KEY findings_claim (claim_id, created_at),
+      CONSTRAINT findings_run_fk FOREIGN KEY (run_id, work_id) REFERENCES runs (id, work_id),
+      CONSTRAINT findings_claim_fk FOREIGN KEY (claim_id, work_id) REFERENCES claims (id, work_id),
+      CONSTRAINT findings_chapter_fk FOREIGN KEY (chapter_id, work_id) REFERENCES chapters (id, work_id),
+      CONSTRAINT findings_version_fk FOREIGN KEY (claim_id, claim_version) REFERENCES claim_versions (claim_id, number),
+      CONSTRAINT findings_verdict_known CHECK (verdict IS NULL OR verdict IN
+        ('confirmed', 'confirmed-not-house-form', 'discrepant', 'contradicted', 'unreadable', 'undecided')),
+      CONSTRAINT findings_judged_whole CHECK ((verdict IS NULL) = (judged_at IS NULL))
+    ) ${TABLE}`,
+    `CREATE TABLE outbox (
+      id ${ID} NOT NULL PRIMARY KEY,
+      kind ${WORD} NOT NULL,
+      payload LONGTEXT NOT NULL,
+      dedupe_key VARCHAR(191) CHARACTER SET ascii COLLATE ascii_bin NULL,
+      state ${WORD} NOT NULL DEFAULT 'pending',
+      due_at DATETIME(3) NOT NULL,
+      attempts INT NOT NULL DEFAULT 0,
+      leased_until DATETIME(3) NULL,
+      last_error TEXT NULL,
+      done_at DATETIME(3) NULL,
+      created_at DATETIME(3) NOT NULL,
+      UNIQUE KEY outbox_dedupe (dedupe_key),
+      KEY outbox_due (state, due_at),
+      KEY outbox_kind (kind, state, created_at),
+      CONSTRAINT outbox_kind_known CHECK (kind IN ('run-batch', 'run-finish', 'mail', 'flag-digest')),
+      CONSTRAINT outbox_state_known CHECK (state IN ('pending', 'done', 'dead')),
+      CONSTRAINT outbox_payload_read CHECK (JSON_VALID(payload))
+    ) ${TABLE}`,
+  ]);
+
+export const down = ({ context }: Migration) => dropTables(context, ["outbox", "findings", "runs"]);
