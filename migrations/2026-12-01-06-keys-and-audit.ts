@@ -20,7 +20,7 @@ export const up = ({ context }: Migration) =>
       UNIQUE KEY frozen_keys_number (work_id, number),
       CONSTRAINT frozen_keys_work_fk FOREIGN KEY (work_id) REFERENCES works (id),
       CONSTRAINT frozen_keys_freezer_fk FOREIGN KEY (frozen_by_id) REFERENCES users (id),
-      CONSTRAINT frozen_keys_hash_true CHECK (sha256 = SHA2(canonical_json, 256)),
+      CONSTRAINT frozen_keys_hash_true CHECK (UNHEX(sha256) = UNHEX(SHA2(canonical_json, 256))),
       CONSTRAINT frozen_keys_counted CHECK (number >= 1 AND claims >= 0)
     ) ${TABLE}`,
     refuse("frozen_keys", "UPDATE", "A frozen key is never changed."),
