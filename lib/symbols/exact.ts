@@ -10,8 +10,13 @@ import { collect, type Term } from "@/lib/symbols/term";
  */
 export type Exact = Readonly<{ terms: readonly Term[] }>;
 
-/** Limits of one value; an operation that would pass them throws TooCostly before it works. */
-export const EXACT_LIMITS = { terms: 256, power: 2_000, digits: 100_000 } as const;
+/**
+ * Limits of arithmetic; an operation that would pass them throws TooCostly before it works. terms: products of terms that one
+ * multiplication may make; digits: of the longest number that may go into an operation; power: the largest exponent.
+ */
+export const EXACT_LIMITS = { terms: 1_024, digits: 10_000, power: 2_000 } as const;
+
+const TOO_LONG = 10n ** BigInt(EXACT_LIMITS.digits);
 
 export const ZERO: Exact = { terms: [] };
 export const ONE: Exact = rational(1n);
@@ -49,7 +54,7 @@ export function surd(coefficient: Fraction, radicand: bigint): Exact {
 export function add(x: Exact, y: Exact): Exact {
   if (x.terms.length === 0) return y;
   if (y.terms.length === 0) return x;
-  limitTerms(x.terms.length + y.terms.length);
+  limit(x, y, x.terms.length + y.terms.length);
   return { terms: collect([...x.terms, ...y.terms]) };
 }
 
@@ -62,7 +67,7 @@ export function subtract(x: Exact, y: Exact): Exact {
 }
 
 export function multiply(x: Exact, y: Exact): Exact {
-  if (x.terms.length > 1 && y.terms.length > 1) limitTerms(x.terms.length * y.terms.length);
+  limit(x, y, x.terms.length * y.terms.length);
   return { terms: collect(x.terms.flatMap((a) => y.terms.map((b) => timesTerm(a, b)))) };
 }
 
@@ -225,8 +230,8 @@ export function squareRoot(x: Exact): Exact {
     equals(multiply(r, r), { terms: plain }),
   );
   if (!found) throw noRoot();
-  const principal = isReal(found) && signOfSum(found.terms) < 0 ? negate(found) : found;
-  return multiply(scale, principal);
+  const leading = isZero(realPart(found)) ? imaginaryPart(found) : realPart(found);
+  return multiply(scale, signOfSum(leading.terms) < 0 ? negate(found) : found);
 }
 
 /** A single term as (rational part, other part). */
@@ -312,10 +317,14 @@ export function digitsOf(x: Exact): number {
   );
 }
 
-function limitTerms(count: number): void {
-  if (count > 4 * EXACT_LIMITS.terms) {
+function limit(x: Exact, y: Exact, terms: number): void {
+  if (terms > EXACT_LIMITS.terms)
+    throw new TooCostly("This expression has too many different roots to be worked out.");
+  const long = (t: Term) =>
+    t.coefficient.n >= TOO_LONG || t.coefficient.d >= TOO_LONG || t.radicand >= TOO_LONG;
+  if (x.terms.some(long) || y.terms.some(long)) {
     throw new TooCostly(
-      `This expression has more than ${EXACT_LIMITS.terms} different roots and is not worked out.`,
+      `This expression has a number of more than ${EXACT_LIMITS.digits.toLocaleString("en-GB")} digits.`,
     );
   }
 }

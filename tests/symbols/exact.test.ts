@@ -136,6 +136,9 @@ describe("exact values", () => {
     );
     expect(toText(squareRoot(add(integer(3), root(8))))).toBe("1 + sqrt(2)");
     expect(toText(squareRoot(subtract(integer(3), root(8))))).toBe("-1 + sqrt(2)");
+    expect(toText(squareRoot(subtract(root(8), integer(3))))).toBe("-i + i*sqrt(2)");
+    expect(toText(squareRoot(add(integer(-3), multiply(integer(4), I))))).toBe("1 + 2*i");
+    expect(toText(squareRoot(subtract(integer(-3), multiply(integer(4), I))))).toBe("1 - 2*i");
     expect(toText(squareRoot(integer(-4)))).toBe("2*i");
     expect(toText(squareRoot(I))).toBe("sqrt(2)/2 + i*sqrt(2)/2");
     expect(toText(squareRoot(divide(integer(15), multiply(integer(4), PI))))).toBe("sqrt(15)/(2*sqrt(pi))");
@@ -173,6 +176,15 @@ describe("exact values", () => {
     expect(asRational(multiply(root(2), root(8)))?.toFraction()).toBe("4");
     expect(asRational(root(2))).toBeNull();
     expect(asRational(PI)).toBeNull();
+  });
+
+  it("refuses numbers that grow too long, step by step or at once", () => {
+    const long = power(integer(10), 1999);
+    let x = long;
+    expect(() => {
+      for (let n = 0; n < 100; n++) x = multiply(x, long);
+    }).toThrow(TooCostly);
+    expect(() => add(x, ONE)).toThrow(/digits/);
   });
 
   it("refuses a denominator of too many roots before it works", () => {
