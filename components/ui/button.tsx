@@ -103,7 +103,7 @@ function PendingDots() {
   return (
     <svg viewBox="0 0 18 6" width="18" height="6" aria-hidden="true" fill="currentColor">
       {[3, 9, 15].map((x, i) => (
-        <circle key={x} cx={x} cy="3" r="1.8" style={{ animation: `unset 0.7s ${i * 0.2}s infinite alternate` }} />
+        <circle key={x} cx={x} cy="3" r="1.8" style={{ animation: `unset-type 0.7s ${i * 0.2}s infinite alternate` }} />
       ))}
     </svg>
   );
