@@ -10,6 +10,9 @@ import type { FlagQuery } from "@/lib/flags/flag-query";
 import { flagNeighbours } from "@/lib/flags/flag-neighbours";
 import { orbitClaims } from "@/lib/flags/orbit-claims";
 import { proofOf } from "@/lib/flags/proof";
+import { isReal } from "@/lib/symbols/exact";
+import { toDecimal } from "@/lib/symbols/exact-print";
+import type { Conventions } from "@/lib/verify/conventions";
 import { readValue } from "@/lib/verify/read-value";
 import { conventionsAt } from "@/lib/flags/conventions-at";
 import {
@@ -74,11 +77,15 @@ export async function getFlag(workId: string, flagId: string, query: FlagQuery, 
     verdict: finding.verdict as "discrepant" | "contradicted" | "unreadable",
     reason: finding.reason ?? "",
     quantity: { text: quantity, latex: details.reading?.quantityLatex ?? proof?.latex ?? null },
-    claimed: { text: judged?.claimed ?? claim.claimed, latex: details.reading?.claimedLatex ?? null },
+    claimed: valueOf(judged?.claimed ?? claim.claimed, conventions),
     exact:
       finding.exactText === null
         ? null
-        : { text: finding.exactText, latex: finding.exactLatex ?? finding.exactText, decimal: finding.exactDecimal ?? "" },
+        : {
+            text: finding.exactText,
+            latex: finding.exactLatex ?? finding.exactText,
+            decimal: finding.exactDecimal ?? "",
+          },
     houseForm: details.houseForm,
     errors: details.errors,
     zero: details.zero,
@@ -90,7 +97,7 @@ export async function getFlag(workId: string, flagId: string, query: FlagQuery, 
     assignee: assignee ? { id: assignee.id, name: assignee.name } : null,
     settlement: settlement && {
       ...settlement,
-      now: settlement.word === "correct" ? valueNow(claim.claimed, conventions) : null,
+      now: settlement.word === "correct" ? valueOf(claim.claimed, conventions) : null,
     },
     messages,
     history,
@@ -102,9 +109,12 @@ export async function getFlag(workId: string, flagId: string, query: FlagQuery, 
 }
 export type FlagView = Awaited<ReturnType<typeof getFlag>>;
 
-function valueNow(text: string, conventions: Parameters<typeof readValue>[1]) {
+/** A typed value with its printed form and, to compare it at a glance, its first digits; null where it cannot be read. */
+function valueOf(text: string, conventions: Conventions) {
   const read = readValue(text, conventions);
-  return { text, latex: read.ok ? read.latex : null };
+  if (!read.ok) return { text, latex: null, decimal: null };
+  const { exact } = read.value;
+  return { text, latex: read.latex, decimal: isReal(exact) ? toDecimal(exact, 8) : null };
 }
 
 /** What this person may do with the flag, and in one sentence why they may not settle it. */
