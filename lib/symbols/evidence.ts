@@ -21,12 +21,12 @@ const FORMULA: Record<Kind, { latex: string; source: string }> = {
   "3j": {
     latex: `${THREE_J}=(-1)^{j_1-j_2-m_3}${ROOT}${SUM},\\quad ${LETTERS}`,
     source:
-      "Racah's sum, DLMF 34.2.4 (Varshalovich, Moskalev and Khersonskii, section 8.2.1), each term multiplied by A! B! C! so that it is a whole number",
+      "Racah's sum, DLMF 34.2.4 (Varshalovich, Moskalev and Khersonskii, section 8.2), each term multiplied by A! B! C! so that it is a whole number",
   },
   cg: {
     latex: `\\left\\langle j_1m_1j_2m_2\\middle|JM\\right\\rangle=(-1)^{j_1-j_2+M}\\sqrt{2J+1}\\begin{pmatrix}j_1&j_2&J\\\\m_1&m_2&-M\\end{pmatrix},\\quad ${THREE_J}=(-1)^{j_1-j_2-m_3}${ROOT}${SUM},\\quad ${LETTERS}`,
     source:
-      "DLMF 34.1.1 and Racah's sum, DLMF 34.2.4 (Varshalovich, Moskalev and Khersonskii, sections 8.1.2 and 8.2.1), with j3 = J and m3 = −M, each term multiplied by A! B! C! so that it is a whole number",
+      "DLMF 34.1.1 and Racah's sum, DLMF 34.2.4 (Varshalovich, Moskalev and Khersonskii, sections 8.1 and 8.2), with j3 = J and m3 = −M, each term multiplied by A! B! C! so that it is a whole number",
   },
 };
 

@@ -7,7 +7,7 @@ import { binomial, type ThreeJ } from "@/lib/symbols/three-j";
  * Second route, independent of Racah's sum: |J M⟩ is the eigenvector of J² in the space of products |j1 m1⟩|j2 M−m1⟩.
  *
  * In the basis f_m = √((j+m)!(j−m)!) |j m⟩ the ladder operators have whole matrix elements, J± f_m = (j∓m) f_{m±1}, and
- * J² = J1² + J2² + 2 J1z J2z + J1+J2− + J1−J2+ becomes the three-term recursion (VMK 8.6.5 in this basis)
+ * J² = J1² + J2² + 2 J1z J2z + J1+J2− + J1−J2+ becomes the three-term recursion (VMK section 8.6 in this basis)
  *   (j1−m1+1)(j2+m2+1) c(m1−1) = [J(J+1) − j1(j1+1) − j2(j2+1) − 2 m1 m2] c(m1) − (j1+m1+1)(j2−m2+1) c(m1+1).
  * It is run downwards from the largest m1, where Condon and Shortley's phase makes the coefficient positive (VMK 8.1.1),
  * and the vector is normalised by Σ c² (j1±m1)!(j2±m2)! = N. Throws an Error if a step is not whole or N does not

@@ -7,7 +7,7 @@ type Order = readonly [number, number, number];
 
 /**
  * One of the 72 symmetries of the Regge square: it may be transposed, then its rows and its columns are put in an order. The
- * symbol is multiplied by (−1)^(j1+j2+j3) when rows and columns together are permuted oddly (references: Regge 1958; VMK 8.4.5).
+ * symbol is multiplied by (−1)^(j1+j2+j3) when rows and columns together are permuted oddly (references: Regge 1958; VMK section 8.4).
  */
 export type Element = {
   name: string;

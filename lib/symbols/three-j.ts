@@ -40,7 +40,7 @@ export type RacahParts = {
 
 /**
  * Racah's finite sum for an allowed 3j symbol with Regge square s, over whole numbers. With A = j1+j2−j3, B = j1−j2+j3,
- * C = −j1+j2+j3, J = j1+j2+j3, formula DLMF 34.2.4 (VMK 8.2.1) is
+ * C = −j1+j2+j3, J = j1+j2+j3, formula DLMF 34.2.4 (VMK section 8.2) is
  *   3j = (−1)^(j1−j2−m3) √( Π(ji+mi)!(ji−mi)! / ((J+1)! A! B! C!) ) Σ_k (−1)^k C(A,k) C(B,j1−m1−k) C(C,j2+m2−k),
  * because the six factorials below each of its terms pair off into three binomials.
  */
@@ -87,7 +87,7 @@ export function threeJ(entries: ThreeJ): Exact {
 }
 
 /**
- * ⟨j1 m1 j2 m2 | J M⟩ = (−1)^(j1−j2+M) √(2J+1) (j1 j2 J; m1 m2 −M) (DLMF 34.1.1, VMK 8.1.12), and 0 when a rule fails.
+ * ⟨j1 m1 j2 m2 | J M⟩ = (−1)^(j1−j2+M) √(2J+1) (j1 j2 J; m1 m2 −M) (DLMF 34.1.1, VMK 8.1(12)), and 0 when a rule fails.
  */
 export function clebschGordan(entries: ThreeJ): Exact {
   const square = reggeSquare(entries);

@@ -82,7 +82,7 @@ describe("orthogonality, exact, j ≤ 30", () => {
 });
 
 describe("recursions, exact, j ≤ 30", () => {
-  it("lowering M by the ladder operator J− (VMK 8.6.2)", () => {
+  it("lowering M by the ladder operator J− (VMK section 8.6)", () => {
     const lowered = allowedCg(30);
     fc.assert(
       fc.property(lowered, (q) => {
@@ -99,7 +99,7 @@ describe("recursions, exact, j ≤ 30", () => {
     );
   });
 
-  it("three terms in j (Schulten and Gordon 1975; VMK 8.6.9), between neighbours j3−1, j3, j3+1", () => {
+  it("three terms in j (Schulten and Gordon 1975; VMK section 8.6), between neighbours j3−1, j3, j3+1", () => {
     fc.assert(
       fc.property(allowedThreeJ(30), (q) => {
         const [a, b, c, x, y, z] = q.args as [Twice, Twice, Twice, Twice, Twice, Twice];
