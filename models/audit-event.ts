@@ -17,8 +17,8 @@ export class AuditEvent extends Model<InferAttributes<AuditEvent>, InferCreation
   declare action: string;
   declare subjectType: string;
   declare subjectId: string;
-  declare before: CreationOptional<unknown | null>;
-  declare after: CreationOptional<unknown | null>;
+  declare before: unknown;
+  declare after: unknown;
   declare createdAt: CreationOptional<Date>;
 }
 

@@ -27,11 +27,11 @@ export class Finding extends Model<InferAttributes<Finding>, InferCreationAttrib
   declare exactText: CreationOptional<string | null>;
   declare exactLatex: CreationOptional<string | null>;
   declare exactDecimal: CreationOptional<string | null>;
-  declare slips: CreationOptional<unknown | null>;
+  declare slips: unknown;
   declare reason: CreationOptional<string | null>;
   /** reading, errors, house form, vanishing reasons, canonical claim: the rest of lib/verify's Finding */
-  declare details: CreationOptional<unknown | null>;
-  declare evidence: CreationOptional<unknown | null>;
+  declare details: unknown;
+  declare evidence: unknown;
   declare orbitKey: CreationOptional<string | null>;
   declare judgedAt: CreationOptional<Date | null>;
   declare createdAt: CreationOptional<Date>;

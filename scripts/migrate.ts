@@ -1,8 +1,8 @@
 import { readdirSync } from "node:fs";
 import path from "node:path";
 import { fileURLToPath } from "node:url";
-import { QueryTypes, Sequelize } from "sequelize";
-import { SequelizeStorage, Umzug } from "umzug";
+import { QueryTypes, Sequelize, type QueryInterface } from "sequelize";
+import { SequelizeStorage, Umzug, type RunnableMigration } from "umzug";
 import { env } from "@/lib/env";
 
 const FOLDER = path.resolve(path.dirname(fileURLToPath(import.meta.url)), "../migrations");
@@ -14,20 +14,23 @@ export function migrator(sequelize: Sequelize) {
     .filter((name) => /^\d{4}-\d\d-\d\d-\d\d-.*\.ts$/.test(name))
     .sort();
   return new Umzug({
-    migrations: names.map((file) => {
-      const load = () =>
-        import(path.join(FOLDER, file)) as Promise<typeof import("../migrations/2026-12-01-01-people")>;
-      const name = file.replace(/\.ts$/, "");
-      return {
-        name,
-        up: async (step) => (await load()).up({ context: step.context }),
-        down: async (step) => (await load()).down({ context: step.context }),
-      };
-    }),
+    migrations: names.map(named),
     context: sequelize.getQueryInterface(),
     storage: new SequelizeStorage({ sequelize, tableName: "migrations" }),
     logger: undefined,
   });
+}
+
+type Steps = Record<"up" | "down", (migration: { context: QueryInterface }) => Promise<void>>;
+
+/** A migration is loaded when it is carried out, and remembered by its name without the ending. */
+function named(file: string): RunnableMigration<QueryInterface> {
+  const load = () => import(path.join(FOLDER, file)) as Promise<Steps>;
+  return {
+    name: file.replace(/\.ts$/, ""),
+    up: async ({ context }) => (await load()).up({ context }),
+    down: async ({ context }) => (await load()).down({ context }),
+  };
 }
 
 /** A pool of one connection: the lock belongs to a connection, and must be held by the one that migrates. */
