@@ -1,7 +1,6 @@
 import { stringify } from "csv-stringify/sync";
 
-import type { Exported } from "@/lib/keys/export-key";
-import type { KeyContent } from "@/lib/keys/key-content";
+import type { Exported, KeyContent } from "@/lib/keys/key-content";
 
 const COLUMNS = [
   "ref",

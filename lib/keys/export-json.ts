@@ -1,5 +1,4 @@
-import type { Exported } from "@/lib/keys/export-key";
-import type { KeyContent } from "@/lib/keys/key-content";
+import type { Exported, KeyContent } from "@/lib/keys/key-content";
 
 /**
  * The key as JSON that the product's own key reader takes. `sha256` is the hash of the canonical JSON (RFC 8785) of

@@ -4,11 +4,9 @@ import { keyAsCsv } from "@/lib/keys/export-csv";
 import { keyAsJson } from "@/lib/keys/export-json";
 import { keyAsLatex } from "@/lib/keys/export-latex";
 import { getKey } from "@/lib/keys/get-key";
+import type { Exported } from "@/lib/keys/key-content";
 import type { KeyFormat } from "@/lib/keys/schema";
 import { transact } from "@/lib/transact";
-
-/** Who made an export and when: stands in it, outside what is hashed. */
-export type Exported = { by: string; at: string };
 
 export type KeyExport = { body: string; contentType: string; fileName: string };
 

@@ -1,5 +1,4 @@
-import type { Exported } from "@/lib/keys/export-key";
-import type { KeyClaim, KeyContent } from "@/lib/keys/key-content";
+import type { Exported, KeyClaim, KeyContent } from "@/lib/keys/key-content";
 
 const SPECIAL: Record<string, string> = {
   "\\": "\\textbackslash{}",

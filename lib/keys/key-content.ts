@@ -36,6 +36,9 @@ export type KeyClaim = {
   waiver: { reason: string; by: string; at: string } | null;
 };
 
+/** Who made an export and when: stands in it, outside what is hashed. */
+export type Exported = { by: string; at: string };
+
 /** What a frozen key says. Its canonical JSON is stored, hashed, and never changed. */
 export type KeyContent = {
   format: "surdmark-key-1";

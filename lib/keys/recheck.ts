@@ -31,7 +31,7 @@ export async function recheckAll(
     if (claim.withdrawnAt !== null) continue;
     const text = textOf(claim);
     const finding =
-      byText.get(text) ?? verifyClaim({ ref: claim.ref, quantity: claim.quantity, claimed: claim.claimed }, conventions);
+      byText.get(text) ?? verifyClaim({ ref: claim.ref, quantity: claim.quantity, claimed: claim.claimed }, conventions, { slips: false });
     if (!byText.has(text)) {
       byText.set(text, finding);
       fresh += 1;

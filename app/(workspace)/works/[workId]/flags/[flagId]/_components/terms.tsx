@@ -18,8 +18,7 @@ export function Terms({ evidence }: { evidence: Kept }) {
             <thead role="rowgroup">
               <tr role="row">
                 <ColumnHead>k</ColumnHead>
-                <ColumnHead align="end">Numerator</ColumnHead>
-                <ColumnHead>Factorials below</ColumnHead>
+                <ColumnHead>Binomials</ColumnHead>
                 <ColumnHead align="end">Whole term</ColumnHead>
               </tr>
             </thead>
@@ -29,11 +28,8 @@ export function Terms({ evidence }: { evidence: Kept }) {
                   <Cell rowHeader label="k">
                     {term.k}
                   </Cell>
-                  <Cell align="end" label="Numerator">
-                    <span className="break-all">{term.numerator}</span>
-                  </Cell>
-                  <Cell label="Below">
-                    <span className="break-all">{term.denominators.join(" · ")}</span>
+                  <Cell label="Binomials">
+                    <Math own latex={binomials(term)} />
                   </Cell>
                   <Cell align="end" label="Whole term">
                     <span className="break-all">{term.value.replace(/^-/, "−")}</span>
@@ -49,4 +45,10 @@ export function Terms({ evidence }: { evidence: Kept }) {
       ) : null}
     </>
   );
+}
+
+/** (−1)^k times the three binomials of the formula, with the numbers put in. */
+function binomials({ k, binomials: three }: Kept["terms"][number]): string {
+  const product = three.map(({ over, under }) => `\\tbinom{${over}}{${under}}`).join("");
+  return k % 2 === 0 ? product : `-${product}`;
 }
