@@ -203,10 +203,59 @@ describe("symmetries, j ≤ 30", () => {
     expect(named("columns 231")).toBe("(3 4 2; -2 1 1)");
     // j1 stays; (j2+j3±m1)/2 = 4, 3 (DLMF 34.3.11 up to the order of columns)
     expect(named("Regge, j1 kept")).toBe("(2 3 4; 1 -2 1)");
-    const other = variants({ kind: "3j", args: [4, 6, 6, 0, 4, -4].map((n) => fromTwice(n)) });
-    const found = other.find((v) => v.name === "Regge, j2 kept")?.quantity as Quantity;
-    // j2 = 3 first, then (j3 + j1 ± m2)/2 = 3/2, 7/2
-    expect(quantityText(found)).toBe("(3 3/2 7/2; 1 1/2 -3/2)");
+    // A symbol whose square is not its own transpose: (3 4 5; 2 1 -3).
+    const other = variants({ kind: "3j", args: [6, 8, 10, 4, 2, -6].map((n) => fromTwice(n)) });
+    const image = (name: string) => quantityText(other.find((v) => v.name === name)?.quantity as Quantity);
+    // j1 = 3 stays, the other two become (j2+j3±m1)/2 = 11/2 and 7/2: DLMF 34.3.11 as printed
+    expect(image("Regge, j1 kept, columns 132, projections reversed")).toBe("(3 11/2 7/2; -1 5/2 -3/2)");
+    // j2 = 4 comes first, then (j3+j1∓m2)/2 = 7/2 and 9/2
+    expect(image("Regge, j2 kept")).toBe("(4 7/2 9/2; 2 3/2 -7/2)");
+    // each j becomes (sum of the other two − its m)/2
+    expect(image("Regge, second row on top")).toBe("(7/2 7/2 5; 5/2 1/2 -3)");
+  });
+
+  it("are 72 different symbols for a generic one", () => {
+    const q: Quantity = { kind: "3j", args: [12, 15, 19, 2, 5, -7].map((n) => fromTwice(n)) };
+    expect(new Set(variants(q).map((v) => quantityText(v.quantity))).size).toBe(72);
+    expect(orbitSymbols(q)).toHaveLength(72);
+    expect(stabiliser(q).map((e) => e.name)).toEqual(["identity"]);
+  });
+
+  it("include those of DLMF 34.3.8 to 34.3.12 as they are printed, with the same key", () => {
+    fc.assert(
+      fc.property(allowedThreeJ(30), (q) => {
+        const [a, b, c, x, y, z] = q.args as [Twice, Twice, Twice, Twice, Twice, Twice];
+        const half = (...n: number[]) => n.map((doubled) => fromTwice(doubled / 2));
+        const odd = ((a + b + c) / 2) % 2 !== 0;
+        const printed: [string, Twice[], boolean][] = [
+          ["34.3.8", [b, c, a, y, z, x], false],
+          ["34.3.9", [b, a, c, y, x, z], odd],
+          ["34.3.10", [a, b, c, fromTwice(-x), fromTwice(-y), fromTwice(-z)], odd],
+          [
+            "34.3.11",
+            half(2 * a, b + c + x, b + c - x, 2 * (b - c), c - b + x + 2 * y, c - b + x + 2 * z),
+            false,
+          ],
+          [
+            "34.3.12",
+            half(a + b - z, b + c - x, a + c - y, 2 * c - a - b - z, 2 * a - b - c - x, 2 * b - a - c - y),
+            false,
+          ],
+        ];
+        const list = new Set(variants(q).map((v) => quantityText(v.quantity)));
+        for (const [equation, args, changes] of printed) {
+          const image: Quantity = { kind: "3j", args };
+          expect(list.has(quantityText(image)), `${equation} of ${quantityText(q)}`).toBe(true);
+          expect(orbit(image).key).toBe(orbit(q).key);
+          same(
+            evaluate(image),
+            changes ? subtract(ZERO, evaluate(q)) : evaluate(q),
+            `${equation} of ${quantityText(q)}`,
+          );
+        }
+      }),
+      { numRuns: 60 },
+    );
   });
 
   it("are the 12 classical ones, all zero, for a forbidden symbol", () => {
