@@ -68,16 +68,16 @@ export function squarePart(x: bigint): { outside: bigint; inside: bigint } {
   return whole === null ? { outside, inside: inside * rest } : { outside: outside * whole, inside };
 }
 
+/** √x where it is whole; null otherwise. */
 export function exactRoot(x: bigint): bigint | null {
   if (x < 0n) return null;
   if (x < 2n) return x;
-  let r = BigInt(Math.floor(Math.sqrt(Number(x))));
-  if (x >= 1n << 104n) {
-    r = 1n << BigInt(Math.ceil(x.toString(2).length / 2));
-    for (let next = (r + x / r) >> 1n; next < r; next = (r + x / r) >> 1n) r = next;
-  }
-  while (r * r > x) r -= 1n;
-  while ((r + 1n) * (r + 1n) <= x) r += 1n;
+  // Newton's steps from above; a double is near enough to begin with while it is exact to about half its digits.
+  let r =
+    x < 1n << 100n
+      ? BigInt(Math.ceil(Math.sqrt(Number(x)))) + 1n
+      : 1n << BigInt((x.toString(16).length * 4) / 2 + 1);
+  for (let next = (r + x / r) >> 1n; next < r; next = (r + x / r) >> 1n) r = next;
   return r * r === x ? r : null;
 }
 
