@@ -82,7 +82,13 @@ function Slug({ cell }: { cell: StripCell }) {
     );
   }
   return (
-    <Link href={cell.href} prefetch={false} className={cx(look, "hover:-translate-y-0.5 hover:border-t-current motion-reduce:transform-none")} aria-label={name} title={name}>
+    <Link
+      href={cell.href}
+      prefetch={false}
+      className={cx(look, "hover:-translate-y-0.5 hover:border-t-current motion-reduce:transform-none")}
+      aria-label={name}
+      title={name}
+    >
       {mark}
     </Link>
   );
@@ -100,7 +106,15 @@ const BAR: Record<Tone, string> = {
 // Height carries the verdict too, so the strip reads without colour: right is low, wrong stands out of the line.
 const HEIGHT: Record<Tone, number> = { green: 10, amber: 16, red: 24, quiet: 5, blue: 10, ink: 10 };
 
-function CompactStrip({ cells, label, className }: { cells: readonly StripCell[]; label: string; className?: string }) {
+function CompactStrip({
+  cells,
+  label,
+  className,
+}: {
+  cells: readonly StripCell[];
+  label: string;
+  className?: string;
+}) {
   const step = 7;
   const words = stripInWords(cells);
   return (
@@ -116,7 +130,16 @@ function CompactStrip({ cells, label, className }: { cells: readonly StripCell[]
         {cells.map((cell, i) => {
           const tone = toneOf(cell.verdict);
           const height = HEIGHT[tone];
-          return <rect key={cell.id} x={i * step + 0.75} y={26 - height} width={step - 1.5} height={height} className={BAR[tone]} />;
+          return (
+            <rect
+              key={cell.id}
+              x={i * step + 0.75}
+              y={26 - height}
+              width={step - 1.5}
+              height={height}
+              className={BAR[tone]}
+            />
+          );
         })}
         <path d={`M0 27.5H${cells.length * step}`} className="stroke-edge" strokeWidth="1" />
       </svg>

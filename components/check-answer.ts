@@ -23,6 +23,8 @@ export type ShownFinding = {
   reason: string;
   errors: readonly ReadingError[];
   houseForm: { text: string } | null;
+  /** A convention under which a wrong claim would be right. */
+  rightUnder?: { says: string } | null;
   zero: readonly { says: string }[];
 };
 

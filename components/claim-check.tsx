@@ -92,7 +92,11 @@ export function ClaimCheck({
                   checked={way === choice.value}
                   onChange={() => {
                     // The other symbol starts empty, unless what is typed already is one.
-                    if (choice.value !== "line" && claim.quantity !== "" && !cellsOf(choice.value, claim.quantity))
+                    if (
+                      choice.value !== "line" &&
+                      claim.quantity !== "" &&
+                      !cellsOf(choice.value, claim.quantity)
+                    )
                       put({ quantity: "" });
                     setWay(choice.value);
                   }}
@@ -116,8 +120,17 @@ export function ClaimCheck({
                   value={claim.quantity}
                   onChange={(event) => put({ quantity: event.target.value })}
                   aria-invalid={quantityFault || errors?.quantity ? true : undefined}
-                  aria-describedby={cx(quantityFault && `${base}-fault-quantity`, errors?.quantity && `${base}-error-quantity`) || undefined}
-                  placeholder={cgOrder === "j1m1j2m2" ? "(1 1 2; 0 0 0) or <1 0 1 0 | 2 0>" : "(1 1 2; 0 0 0) or <1 1 0 0 | 2 0>"}
+                  aria-describedby={
+                    cx(
+                      quantityFault && `${base}-fault-quantity`,
+                      errors?.quantity && `${base}-error-quantity`,
+                    ) || undefined
+                  }
+                  placeholder={
+                    cgOrder === "j1m1j2m2"
+                      ? "(1 1 2; 0 0 0) or <1 0 1 0 | 2 0>"
+                      : "(1 1 2; 0 0 0) or <1 1 0 0 | 2 0>"
+                  }
                   autoComplete="off"
                   autoCapitalize="off"
                   spellCheck={false}
@@ -142,7 +155,10 @@ export function ClaimCheck({
               />
             )}
           </div>
-          <span aria-hidden="true" className={cx("text-2xl text-quiet", way === "line" ? "mt-6 max-sm:hidden" : "-mt-9 max-sm:mt-0")}>
+          <span
+            aria-hidden="true"
+            className={cx("text-2xl text-quiet", way === "line" ? "mt-6 max-sm:hidden" : "-mt-9 max-sm:mt-0")}
+          >
             =
           </span>
           <span className={cx("block min-w-0 font-ui", way !== "line" && "sm:-mt-15")}>
@@ -154,7 +170,10 @@ export function ClaimCheck({
               value={claim.claimed}
               onChange={(event) => put({ claimed: event.target.value })}
               aria-invalid={claimedFault || errors?.claimed ? true : undefined}
-              aria-describedby={cx(claimedFault && `${base}-fault-claimed`, errors?.claimed && `${base}-error-claimed`) || undefined}
+              aria-describedby={
+                cx(claimedFault && `${base}-fault-claimed`, errors?.claimed && `${base}-error-claimed`) ||
+                undefined
+              }
               placeholder="sqrt(2/15)"
               autoComplete="off"
               autoCapitalize="off"
@@ -165,7 +184,9 @@ export function ClaimCheck({
           </span>
         </div>
 
-        {errors?.quantity ? <FieldMessage id={`${base}-error-quantity`}>{errors.quantity}</FieldMessage> : null}
+        {errors?.quantity ? (
+          <FieldMessage id={`${base}-error-quantity`}>{errors.quantity}</FieldMessage>
+        ) : null}
         {errors?.claimed ? <FieldMessage id={`${base}-error-claimed`}>{errors.claimed}</FieldMessage> : null}
 
         <div className="mt-5 grid gap-3">
@@ -228,10 +249,18 @@ export function ClaimCheck({
             {failure}
           </Notice>
         ) : finding && answer ? (
-          <FindingNote finding={finding} html={answer.html} className={cx("transition-opacity", stale && "opacity-45")} />
+          <FindingNote
+            finding={finding}
+            html={answer.html}
+            className={cx("transition-opacity", stale && "opacity-45")}
+          />
         ) : (
           <p className="text-base text-quiet italic">
-            {stale ? "Reading…" : claim.quantity.trim() === "" ? "Fill in the symbol as it is printed." : "Now write the value that the key claims for it."}
+            {stale
+              ? "Reading…"
+              : claim.quantity.trim() === ""
+                ? "Fill in the symbol as it is printed."
+                : "Now write the value that the key claims for it."}
           </p>
         )}
         <p role="status" className="sr-only">

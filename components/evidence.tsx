@@ -49,7 +49,9 @@ export function EvidenceSheet({ evidence, html }: { evidence: Evidence; html: Ev
             total={evidence.total}
           />
           {summary ? (
-            <p className="mt-1.5 text-xs text-quiet">The sum has {summary.count} terms; three of them are shown.</p>
+            <p className="mt-1.5 text-xs text-quiet">
+              The sum has {summary.count} terms; three of them are shown.
+            </p>
           ) : null}
         </Part>
       ) : null}
@@ -94,7 +96,15 @@ function Part({ title, children }: { title: string; children: React.ReactNode })
   );
 }
 
-function TermTable({ terms, names, total }: { terms: readonly EvidenceTerm[]; names: string[] | null; total: string }) {
+function TermTable({
+  terms,
+  names,
+  total,
+}: {
+  terms: readonly EvidenceTerm[];
+  names: string[] | null;
+  total: string;
+}) {
   return (
     <div className="overflow-x-auto" tabIndex={0} role="region" aria-label="Terms of the sum">
       <table className="tabular w-full border-collapse text-right">

@@ -23,7 +23,16 @@ export function FaultLine({
         {text.slice(0, error.at)}
         <span className="relative text-red underline decoration-2 underline-offset-4">
           {text.slice(error.at, end) || "\u00a0"}
-          <svg viewBox="0 0 12 10" width="12" height="10" className="absolute top-full left-0 mt-1" fill="none" stroke="currentColor" strokeWidth="2" strokeLinecap="round">
+          <svg
+            viewBox="0 0 12 10"
+            width="12"
+            height="10"
+            className="absolute top-full left-0 mt-1"
+            fill="none"
+            stroke="currentColor"
+            strokeWidth="2"
+            strokeLinecap="round"
+          >
             <path d="m1.5 9 4.5-7.5L10.5 9" />
           </svg>
         </span>
@@ -37,7 +46,9 @@ export function FaultLine({
       </p>
       {proposals.length > 0 ? (
         <p className="mt-2 flex flex-wrap items-center gap-x-3 gap-y-1.5">
-          <span className="text-quiet">{proposals.length > 1 ? "Either of these reads:" : "This reads:"}</span>
+          <span className="text-quiet">
+            {proposals.length > 1 ? "Either of these reads:" : "This reads:"}
+          </span>
           {proposals.map((proposal) =>
             onTake ? (
               <button

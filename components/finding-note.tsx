@@ -9,7 +9,15 @@ import type { FindingHtml } from "@/lib/typeset/finding-view";
  * The verifier's note on one claim, as it stands in the margin: the verdict with its mark, the recomputed value, how a
  * wrong one came to be wrong, and why a value vanishes.
  */
-export function FindingNote({ finding, html, className }: { finding: ShownFinding; html: FindingHtml; className?: string }) {
+export function FindingNote({
+  finding,
+  html,
+  className,
+}: {
+  finding: ShownFinding;
+  html: FindingHtml;
+  className?: string;
+}) {
   const { word, tone } = VERDICTS[finding.verdict];
   const differs = finding.verdict === "discrepant" || finding.verdict === "contradicted";
   return (
@@ -57,7 +65,16 @@ export function FindingNote({ finding, html, className }: { finding: ShownFindin
           ))}
         </ul>
       ) : finding.errors.length === 0 ? (
-        <p className={cx("text-base leading-snug italic", differs ? "text-red" : "text-ink")}>{finding.reason}</p>
+        <p className={cx("text-base leading-snug italic", differs ? "text-red" : "text-ink")}>
+          {finding.reason}
+        </p>
+      ) : null}
+
+      {finding.rightUnder ? (
+        <div className="text-base leading-snug text-red">
+          <p className="font-ui text-xs text-quiet">a matter of convention?</p>
+          <p className="italic">{finding.rightUnder.says}</p>
+        </div>
       ) : null}
 
       {finding.zero.length > 0 ? (

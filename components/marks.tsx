@@ -86,13 +86,14 @@ const DRAWN: Record<MarkName, ReactNode> = {
     </>
   ),
   // The looped deletion stroke.
-  withdraw: (
-    <path d="M3 13.2h11.3c4.5 0 6.7-2.6 6.2-5.3-.5-2.5-3.5-3-5-1-2.6 3.6-5 8.5-6.2 13.3" />
-  ),
+  withdraw: <path d="M3 13.2h11.3c4.5 0 6.7-2.6 6.2-5.3-.5-2.5-3.5-3-5-1-2.6 3.6-5 8.5-6.2 13.3" />,
   // The seal of a frozen key: a scalloped ring with the radical cut into it.
   seal: (
     <>
-      <path d="m12 1.9 2.4 2 3.1-.3.8 3 2.7 1.6-1.1 2.9 1.1 2.9-2.7 1.6-.8 3-3.1-.3-2.4 2-2.4-2-3.1.3-.8-3L3 14l1.1-2.9L3 8.2l2.7-1.6.8-3 3.1.3z" transform="translate(0 .9)" />
+      <path
+        d="m12 1.9 2.4 2 3.1-.3.8 3 2.7 1.6-1.1 2.9 1.1 2.9-2.7 1.6-.8 3-3.1-.3-2.4 2-2.4-2-3.1.3-.8-3L3 14l1.1-2.9L3 8.2l2.7-1.6.8-3 3.1.3z"
+        transform="translate(0 .9)"
+      />
       <path d="m7.6 12.7 1.5-.7 2 4 2.2-7.6h3.4" />
     </>
   ),
@@ -118,7 +119,9 @@ const DRAWN: Record<MarkName, ReactNode> = {
   ),
   source: <path d="M6 2.8h8.5L19 7.3v13.9H6zM14.3 3v4.5H19M9 12h7M9 16h5" />,
   run: <path d="M4 12h13.5M12.5 6.5 18 12l-5.5 5.5M21 5v14" />,
-  person: <path d="M12 11.8c2.3 0 3.9-1.9 3.9-4.3S14.3 3.3 12 3.3 8.1 5.1 8.1 7.5s1.6 4.3 3.9 4.3ZM4 20.7c.6-4 3.7-6 8-6s7.4 2 8 6" />,
+  person: (
+    <path d="M12 11.8c2.3 0 3.9-1.9 3.9-4.3S14.3 3.3 12 3.3 8.1 5.1 8.1 7.5s1.6 4.3 3.9 4.3ZM4 20.7c.6-4 3.7-6 8-6s7.4 2 8 6" />
+  ),
   undo: <path d="M8.5 4.5 4 9l4.5 4.5M4.5 9h9c4.3 0 6.5 2.3 6.5 5.4 0 3-2.2 5.1-6 5.1H9" />,
   insert: <path d="M12 4.5v15M4.5 12h15" />,
   close: <path d="m5.5 5.5 13 13M18.5 5.5l-13 13" />,
@@ -127,7 +130,17 @@ const DRAWN: Record<MarkName, ReactNode> = {
 };
 
 /** One mark. Give `label` only where no word stands beside it. */
-export function Mark({ name, size = 18, label, className }: { name: MarkName; size?: number; label?: string; className?: string }) {
+export function Mark({
+  name,
+  size = 18,
+  label,
+  className,
+}: {
+  name: MarkName;
+  size?: number;
+  label?: string;
+  className?: string;
+}) {
   return (
     <svg
       viewBox="0 0 24 24"

@@ -25,14 +25,21 @@ export function SiteHeader({
         Skip to the content
       </a>
       <div className="mx-auto flex min-h-16 max-w-page flex-wrap items-center justify-between gap-x-8 px-5 sm:px-8">
-        <Link href={user ? "/desk" : "/"} className="inline-flex py-3 no-underline" aria-label={user ? "Surdmark, to the desk" : "Surdmark, front page"}>
+        <Link
+          href={user ? "/desk" : "/"}
+          className="inline-flex py-3 no-underline"
+          aria-label={user ? "Surdmark, to the desk" : "Surdmark, front page"}
+        >
           <Wordmark />
         </Link>
         <nav aria-label="Main" className="flex items-center gap-x-7">
           <ul className="small-caps hidden items-center gap-x-7 text-lg sm:flex">
             {places.map((place) => (
               <li key={place.href}>
-                <Link href={place.href} className="inline-flex min-h-11 items-center no-underline hover:text-blue hover:underline hover:underline-offset-6">
+                <Link
+                  href={place.href}
+                  className="inline-flex min-h-11 items-center no-underline hover:text-blue hover:underline hover:underline-offset-6"
+                >
                   {place.label}
                 </Link>
               </li>

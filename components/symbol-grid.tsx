@@ -121,9 +121,16 @@ export function SymbolGrid({
       return;
     }
     const entries = text.trim().split(/[\s,;]+/);
-    if (entries.length < 2 || entries.length > 6 - i || !entries.every((entry) => /^[-−]?[\d./½]+$/.test(entry))) return;
+    if (
+      entries.length < 2 ||
+      entries.length > 6 - i ||
+      !entries.every((entry) => /^[-−]?[\d./½]+$/.test(entry))
+    )
+      return;
     event.preventDefault();
-    put(cells.map((cell, k) => (k >= i && k < i + entries.length ? cellAfter("", entries[k - i] ?? "") : cell)));
+    put(
+      cells.map((cell, k) => (k >= i && k < i + entries.length ? cellAfter("", entries[k - i] ?? "") : cell)),
+    );
     go(Math.min(5, i + entries.length - 1));
   }
 
@@ -155,9 +162,9 @@ export function SymbolGrid({
           maxLength={12}
           placeholder=" "
           className={cx(
-            "peer block h-11 w-full min-w-0 rounded-xs border-b border-edge bg-transparent px-0.5 text-center font-work text-lg",
-            "hover:bg-sunk/60 focus:border-blue focus:bg-blue-wash focus:outline-2 focus:-outline-offset-1 focus:outline-blue",
-            "aria-invalid:border-b-2 aria-invalid:border-red aria-invalid:bg-red-wash aria-invalid:text-red",
+            "peer block h-11 w-full min-w-0 rounded-xs border border-dotted border-edge bg-transparent px-0.5 text-center font-work text-lg",
+            "hover:bg-sunk/60 focus:border-solid focus:border-blue focus:bg-blue-wash focus:outline-2 focus:-outline-offset-1 focus:outline-blue",
+            "aria-invalid:border-2 aria-invalid:border-solid aria-invalid:border-red aria-invalid:bg-red-wash aria-invalid:text-red",
           )}
         />
         <span
@@ -203,7 +210,11 @@ export function SymbolGrid({
         <CellKey
           says="Make a half of this cell"
           onPress={() => {
-            put(cells.map((text, k) => (k === active.current ? cellAfter(text, `${text.replace(/\/2$/, "")}/`) : text)));
+            put(
+              cells.map((text, k) =>
+                k === active.current ? cellAfter(text, `${text.replace(/\/2$/, "")}/`) : text,
+              ),
+            );
             inputs.current[active.current]?.focus();
           }}
         >

@@ -2,7 +2,7 @@
 
 import { useState } from "react";
 
-import { THEME_COOKIE, type Theme } from "@/components/theme";
+import { applyTheme, type Theme } from "@/components/theme";
 
 const CHOICES: readonly { value: Theme; label: string }[] = [
   { value: "light", label: "light" },
@@ -15,11 +15,7 @@ export function ThemeSwitch({ theme }: { theme: Theme }) {
   const [chosen, setChosen] = useState(theme);
   function choose(next: Theme) {
     setChosen(next);
-    const root = document.documentElement;
-    if (next === "system") delete root.dataset.theme;
-    else root.dataset.theme = next;
-    const secure = location.protocol === "https:" ? "; secure" : "";
-    document.cookie = `${THEME_COOKIE}=${next}; path=/; max-age=31536000; samesite=lax${secure}`;
+    applyTheme(next);
   }
   return (
     <fieldset className="flex flex-wrap items-center gap-x-4 font-ui text-sm">

@@ -20,7 +20,11 @@ const PAUSE = 300;
 
 type Problem = { detail?: string; title?: string };
 
-async function ask(claim: Claim, conventions: Partial<Conventions> | undefined, signal: AbortSignal): Promise<CheckAnswer> {
+async function ask(
+  claim: Claim,
+  conventions: Partial<Conventions> | undefined,
+  signal: AbortSignal,
+): Promise<CheckAnswer> {
   const response = await fetch("/api/check", {
     method: "POST",
     headers: { "content-type": "application/json", accept: "application/json" },
@@ -31,7 +35,10 @@ async function ask(claim: Claim, conventions: Partial<Conventions> | undefined, 
   const problem = (await response.json().catch(() => ({}))) as Problem;
   const wait = response.headers.get("retry-after");
   if (response.status === 429)
-    throw new Error(problem.detail ?? `Too many checks just now. ${wait ? `Go on in ${wait} seconds.` : "Go on in a minute."}`);
+    throw new Error(
+      problem.detail ??
+        `Too many checks just now. ${wait ? `Go on in ${wait} seconds.` : "Go on in a minute."}`,
+    );
   throw new Error(problem.detail ?? problem.title ?? `The check was not carried out (${response.status}).`);
 }
 

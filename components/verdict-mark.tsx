@@ -19,8 +19,13 @@ export function VerdictMark({
   size?: number;
   className?: string;
 }) {
-  const { word, short: shortWord, tone } =
-    verdict === null ? { word: "not checked yet", short: "not checked", tone: "quiet" as const } : VERDICTS[verdict];
+  const {
+    word,
+    short: shortWord,
+    tone,
+  } = verdict === null
+    ? { word: "not checked yet", short: "not checked", tone: "quiet" as const }
+    : VERDICTS[verdict];
   const shown = short ? shortWord : word;
   return (
     <span className={cx("inline-flex items-center gap-1.5 font-ui", TONE_TEXT[tone], className)}>
@@ -31,7 +36,17 @@ export function VerdictMark({
 }
 
 /** One of the four words that settle a flag, with its mark. */
-export function SettleMark({ word, withWord = true, size = 18, className }: { word: SettleId; withWord?: boolean; size?: number; className?: string }) {
+export function SettleMark({
+  word,
+  withWord = true,
+  size = 18,
+  className,
+}: {
+  word: SettleId;
+  withWord?: boolean;
+  size?: number;
+  className?: string;
+}) {
   return (
     <span className={cx("inline-flex items-center gap-1.5 font-ui text-blue", className)}>
       <Mark name={word} size={size} label={withWord ? undefined : SETTLE_WORDS[word].word} />
@@ -41,7 +56,15 @@ export function SettleMark({ word, withWord = true, size = 18, className }: { wo
 }
 
 /** The seal of a frozen key, with its number. */
-export function KeySeal({ number, size = 40, className }: { number: number; size?: number; className?: string }) {
+export function KeySeal({
+  number,
+  size = 40,
+  className,
+}: {
+  number: number;
+  size?: number;
+  className?: string;
+}) {
   return (
     <span className={cx("inline-flex items-center gap-2 text-red", className)}>
       <Mark name="seal" size={size} />

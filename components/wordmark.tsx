@@ -11,7 +11,13 @@ export function Wordmark({ size = "medium", className }: { size?: "medium" | "la
         className,
       )}
     >
-      <svg viewBox="0 0 22 36" className="h-[1.32em] w-[0.8em] overflow-visible text-red" fill="none" stroke="currentColor" aria-hidden="true">
+      <svg
+        viewBox="0 0 22 36"
+        className="h-[1.32em] w-[0.8em] overflow-visible text-red"
+        fill="none"
+        stroke="currentColor"
+        aria-hidden="true"
+      >
         <path d="M1.5 21.5 6 18.8" strokeWidth="1.5" strokeLinecap="round" />
         <path d="m5.8 18.6 5.4 14.2" strokeWidth="3" strokeLinecap="round" />
         <path d="M11.3 33.5 22 .9" strokeWidth="1.5" strokeLinecap="square" />

@@ -1,12 +1,7 @@
 /** The words that every screen uses for the same things, with what each means in one sentence. */
 
 export type VerdictId =
-  | "confirmed"
-  | "confirmed-not-house-form"
-  | "discrepant"
-  | "contradicted"
-  | "unreadable"
-  | "undecided";
+  "confirmed" | "confirmed-not-house-form" | "discrepant" | "contradicted" | "unreadable" | "undecided";
 
 export type Tone = "green" | "amber" | "red" | "quiet" | "blue" | "ink";
 
@@ -21,7 +16,8 @@ export const VERDICTS: Record<VerdictId, { word: string; short: string; tone: To
     word: "confirmed, not in house form",
     short: "not in house form",
     tone: "amber",
-    means: "The claimed value equals the recomputed one exactly, but is not written the way the conventions sheet asks.",
+    means:
+      "The claimed value equals the recomputed one exactly, but is not written the way the conventions sheet asks.",
   },
   discrepant: {
     word: "discrepant",

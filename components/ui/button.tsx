@@ -73,7 +73,14 @@ type LinkButtonProps = ComponentProps<typeof Link> & {
 };
 
 /** A link that looks like a press: it goes somewhere and changes nothing. */
-export function LinkButton({ variant = "quiet", size = "medium", mark, className, children, ...rest }: LinkButtonProps) {
+export function LinkButton({
+  variant = "quiet",
+  size = "medium",
+  mark,
+  className,
+  children,
+  ...rest
+}: LinkButtonProps) {
   return (
     <Link className={look(variant, size, className)} {...rest}>
       {mark}
@@ -103,7 +110,13 @@ function PendingDots() {
   return (
     <svg viewBox="0 0 18 6" width="18" height="6" aria-hidden="true" fill="currentColor">
       {[3, 9, 15].map((x, i) => (
-        <circle key={x} cx={x} cy="3" r="1.8" style={{ animation: `unset-type 0.7s ${i * 0.2}s infinite alternate` }} />
+        <circle
+          key={x}
+          cx={x}
+          cy="3"
+          r="1.8"
+          style={{ animation: `unset-type 0.7s ${i * 0.2}s infinite alternate` }}
+        />
       ))}
     </svg>
   );

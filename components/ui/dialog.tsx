@@ -65,7 +65,9 @@ export function Dialog({
           </header>
           <div className="px-6 py-5">{children}</div>
           {footer ? (
-            <footer className="flex flex-wrap justify-end gap-3 border-t border-rule px-6 py-4">{footer}</footer>
+            <footer className="flex flex-wrap justify-end gap-3 border-t border-rule px-6 py-4">
+              {footer}
+            </footer>
           ) : null}
         </div>
       ) : null}

@@ -8,7 +8,13 @@ export type SummaryItem = { field?: string; message: string };
  * What must be mended before a form can be saved: at the head of the form, with focus moved to it, each line leading to
  * its field by the field's id. Give a new `key` (a count of attempts) to have focus moved again.
  */
-export function ErrorSummary({ items, title = "This was not saved yet" }: { items: readonly SummaryItem[]; title?: string }) {
+export function ErrorSummary({
+  items,
+  title = "This was not saved yet",
+}: {
+  items: readonly SummaryItem[];
+  title?: string;
+}) {
   const ref = useRef<HTMLDivElement>(null);
   const shown = items.length > 0;
   useEffect(() => {
@@ -16,7 +22,13 @@ export function ErrorSummary({ items, title = "This was not saved yet" }: { item
   }, [shown]);
   if (!shown) return null;
   return (
-    <div ref={ref} tabIndex={-1} role="alert" aria-labelledby="error-summary-title" className="border-2 border-red bg-sheet px-5 py-4 font-ui text-sm">
+    <div
+      ref={ref}
+      tabIndex={-1}
+      role="alert"
+      aria-labelledby="error-summary-title"
+      className="border-2 border-red bg-sheet px-5 py-4 font-ui text-sm"
+    >
       <h2 id="error-summary-title" className="font-ui text-base font-medium text-red">
         {title}
       </h2>

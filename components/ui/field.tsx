@@ -48,7 +48,11 @@ export function FieldShell({
         </p>
       ) : null}
       <div className="mt-1.5">
-        {children({ id, "aria-describedby": described || undefined, "aria-invalid": message ? true : undefined })}
+        {children({
+          id,
+          "aria-describedby": described || undefined,
+          "aria-invalid": message ? true : undefined,
+        })}
       </div>
       {message ? <FieldMessage id={`${id}-error`}>{message}</FieldMessage> : null}
     </div>
@@ -60,7 +64,13 @@ export function FieldMessage({ id, children }: { id?: string; children: ReactNod
   return (
     <p id={id} className="mt-1.5 flex gap-1.5 font-ui text-sm text-red">
       <svg viewBox="0 0 12 16" width="10" height="14" aria-hidden="true" className="mt-1 shrink-0">
-        <path d="M1.5 14 6 3l4.5 11" fill="none" stroke="currentColor" strokeWidth="1.6" strokeLinecap="round" />
+        <path
+          d="M1.5 14 6 3l4.5 11"
+          fill="none"
+          stroke="currentColor"
+          strokeWidth="1.6"
+          strokeLinecap="round"
+        />
       </svg>
       <span>
         <span className="sr-only">Error: </span>
@@ -103,7 +113,9 @@ export function TextArea({
   const own = useId();
   return (
     <FieldShell {...{ label, hint, error, optional, className }} id={id ?? own}>
-      {(tie) => <textarea rows={4} className={cx(BOX, "py-2 leading-relaxed", inputClassName)} {...input} {...tie} />}
+      {(tie) => (
+        <textarea rows={4} className={cx(BOX, "py-2 leading-relaxed", inputClassName)} {...input} {...tie} />
+      )}
     </FieldShell>
   );
 }
@@ -119,7 +131,8 @@ export function Select({
   options,
   children,
   ...input
-}: Shared & ComponentProps<"select"> & { options?: readonly { value: string; label: string; disabled?: boolean }[] }) {
+}: Shared &
+  ComponentProps<"select"> & { options?: readonly { value: string; label: string; disabled?: boolean }[] }) {
   const own = useId();
   return (
     <FieldShell {...{ label, hint, error, optional, className }} id={id ?? own}>
@@ -133,7 +146,13 @@ export function Select({
             ))}
             {children}
           </select>
-          <svg viewBox="0 0 12 8" width="12" height="8" aria-hidden="true" className="pointer-events-none absolute top-1/2 right-3 -translate-y-1/2 text-quiet">
+          <svg
+            viewBox="0 0 12 8"
+            width="12"
+            height="8"
+            aria-hidden="true"
+            className="pointer-events-none absolute top-1/2 right-3 -translate-y-1/2 text-quiet"
+          >
             <path d="m1 1.5 5 5 5-5" fill="none" stroke="currentColor" strokeWidth="1.5" />
           </svg>
         </span>
@@ -162,7 +181,9 @@ export function Checkbox({
           id={tie}
           className="mt-px size-5 shrink-0"
           aria-invalid={message ? true : undefined}
-          aria-describedby={[hint ? `${tie}-hint` : "", message ? `${tie}-error` : ""].filter(Boolean).join(" ") || undefined}
+          aria-describedby={
+            [hint ? `${tie}-hint` : "", message ? `${tie}-error` : ""].filter(Boolean).join(" ") || undefined
+          }
           {...input}
         />
         <span>{label}</span>
@@ -210,7 +231,9 @@ export function RadioCards({
   return (
     <fieldset
       className={cx("font-ui", className)}
-      aria-describedby={[hint ? `${id}-hint` : "", message ? `${id}-error` : ""].filter(Boolean).join(" ") || undefined}
+      aria-describedby={
+        [hint ? `${id}-hint` : "", message ? `${id}-error` : ""].filter(Boolean).join(" ") || undefined
+      }
       aria-invalid={message ? true : undefined}
     >
       <legend className="text-sm font-medium">{legend}</legend>
@@ -238,7 +261,9 @@ export function RadioCards({
               disabled={option.disabled}
               className="mt-0.5 size-5 shrink-0 outline-none"
               {...rest}
-              {...("defaultValue" in rest ? { defaultChecked: rest.defaultValue === option.value, defaultValue: undefined } : {})}
+              {...("defaultValue" in rest
+                ? { defaultChecked: rest.defaultValue === option.value, defaultValue: undefined }
+                : {})}
             />
             <span className="min-w-0 flex-1">
               <span className="flex items-center gap-2 font-medium">

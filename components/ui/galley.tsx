@@ -4,7 +4,15 @@ import { cx } from "@/components/cx";
 import { Mark, type MarkName } from "@/components/marks";
 
 /** A galley: lines of the work with a ruled margin for notes. */
-export function Galley({ label, className, children }: { label?: string; className?: string; children: ReactNode }) {
+export function Galley({
+  label,
+  className,
+  children,
+}: {
+  label?: string;
+  className?: string;
+  children: ReactNode;
+}) {
   return (
     <div className={cx("galley", className)} role={label ? "group" : undefined} aria-label={label}>
       {children}
@@ -13,7 +21,17 @@ export function Galley({ label, className, children }: { label?: string; classNa
 }
 
 /** One line of a galley with the notes that concern it; on a phone the notes fall under the line. */
-export function GalleyLine({ id, notes, className, children }: { id?: string; notes?: ReactNode; className?: string; children: ReactNode }) {
+export function GalleyLine({
+  id,
+  notes,
+  className,
+  children,
+}: {
+  id?: string;
+  notes?: ReactNode;
+  className?: string;
+  children: ReactNode;
+}) {
   return (
     <div id={id} className={cx("galley-line", className)}>
       <div className="galley-text min-w-0">{children}</div>
@@ -39,7 +57,11 @@ export function MarginNote({
   return (
     <aside
       aria-label={pencil === "red" ? "Verifier's note" : "Author's note"}
-      className={cx("flex gap-2 text-sm leading-snug", pencil === "red" ? "pencil-red" : "pencil-blue", className)}
+      className={cx(
+        "flex gap-2 text-sm leading-snug",
+        pencil === "red" ? "pencil-red" : "pencil-blue",
+        className,
+      )}
     >
       {mark ? <Mark name={mark} size={18} className="mt-0.5" /> : null}
       <div className="min-w-0">

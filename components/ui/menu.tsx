@@ -45,7 +45,13 @@ export function Menu({
     >
       <summary className="flex min-h-11 items-center gap-2 px-1 hover:text-blue">
         {label}
-        <svg viewBox="0 0 10 7" width="10" height="7" aria-hidden="true" className="transition-transform group-open:rotate-180">
+        <svg
+          viewBox="0 0 10 7"
+          width="10"
+          height="7"
+          aria-hidden="true"
+          className="transition-transform group-open:rotate-180"
+        >
           <path d="m1 1 4 4 4-4" fill="none" stroke="currentColor" strokeWidth="1.4" />
         </svg>
       </summary>

@@ -4,9 +4,19 @@ import { Fragment, type ReactNode } from "react";
 import { cx } from "@/components/cx";
 
 /** The column of a page: `sheet` for reading and forms, `page` for galleys and tables. */
-export function PageBody({ width = "page", className, children }: { width?: "measure" | "sheet" | "page"; className?: string; children: ReactNode }) {
+export function PageBody({
+  width = "page",
+  className,
+  children,
+}: {
+  width?: "measure" | "sheet" | "page";
+  className?: string;
+  children: ReactNode;
+}) {
   const widths = { measure: "max-w-measure", sheet: "max-w-sheet", page: "max-w-page" };
-  return <div className={cx("mx-auto w-full px-5 pt-7 pb-16 sm:px-8", widths[width], className)}>{children}</div>;
+  return (
+    <div className={cx("mx-auto w-full px-5 pt-7 pb-16 sm:px-8", widths[width], className)}>{children}</div>
+  );
 }
 
 export type Crumb = { label: ReactNode; href?: string };
@@ -25,7 +35,10 @@ export function Crumbs({ trail }: { trail: readonly Crumb[] }) {
             ) : null}
             <li className="min-w-0">
               {crumb.href ? (
-                <Link href={crumb.href} className="inline-flex min-h-6 items-center no-underline hover:text-blue hover:underline hover:underline-offset-4">
+                <Link
+                  href={crumb.href}
+                  className="inline-flex min-h-6 items-center no-underline hover:text-blue hover:underline hover:underline-offset-4"
+                >
                   {crumb.label}
                 </Link>
               ) : (
@@ -96,6 +109,14 @@ export function Section({
 }
 
 /** The sheet of type with its hairline frame; `marks` adds the printer's crop marks outside the corners. */
-export function Sheet({ marks = false, className, children }: { marks?: boolean; className?: string; children: ReactNode }) {
+export function Sheet({
+  marks = false,
+  className,
+  children,
+}: {
+  marks?: boolean;
+  className?: string;
+  children: ReactNode;
+}) {
   return <div className={cx("sheet", marks && "sheet-marks", className)}>{children}</div>;
 }

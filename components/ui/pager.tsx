@@ -19,7 +19,10 @@ export function Pager({
   }
   const link = "inline-flex min-h-11 items-center px-1 text-blue underline underline-offset-4";
   return (
-    <nav aria-label="Pages" className="tabular flex flex-wrap items-center justify-between gap-4 py-2 font-ui text-sm">
+    <nav
+      aria-label="Pages"
+      className="tabular flex flex-wrap items-center justify-between gap-4 py-2 font-ui text-sm"
+    >
       <span className="text-quiet">{`${total} ${unit}`}</span>
       <span className="flex items-center gap-5">
         {page > 1 ? (

@@ -1,5 +1,15 @@
 /** How far long work has come: a rule that is inked from the left, with the figures in words. `total` 0 = not known yet. */
-export function Progress({ done, total, label, text }: { done: number; total: number; label: string; text?: string }) {
+export function Progress({
+  done,
+  total,
+  label,
+  text,
+}: {
+  done: number;
+  total: number;
+  label: string;
+  text?: string;
+}) {
   const share = total > 0 ? Math.min(100, (done / total) * 100) : 0;
   const words = text ?? (total > 0 ? `${done} of ${total}` : "starting");
   return (

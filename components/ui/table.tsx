@@ -106,7 +106,8 @@ export function ColumnHead({
   const state = sort?.direction ?? direction ?? null;
   const sortable = Boolean(sort ?? onSort);
   const arrow = sortable ? <SortMark state={state} /> : null;
-  const press = "inline-flex min-h-6 items-baseline gap-1.5 underline-offset-4 hover:text-ink hover:underline";
+  const press =
+    "inline-flex min-h-6 items-baseline gap-1.5 underline-offset-4 hover:text-ink hover:underline";
   return (
     <th
       scope="col"
@@ -162,7 +163,15 @@ export function Cell({
 
 function SortMark({ state }: { state: "ascending" | "descending" | null }) {
   return (
-    <svg viewBox="0 0 8 12" width="8" height="12" aria-hidden="true" fill="none" stroke="currentColor" strokeWidth="1.3">
+    <svg
+      viewBox="0 0 8 12"
+      width="8"
+      height="12"
+      aria-hidden="true"
+      fill="none"
+      stroke="currentColor"
+      strokeWidth="1.3"
+    >
       <path d="M1 4.5 4 1.5l3 3" opacity={state === "descending" ? 0.25 : 1} />
       <path d="m1 7.5 3 3 3-3" opacity={state === "ascending" ? 0.25 : 1} />
     </svg>

@@ -9,7 +9,10 @@ export type Tab = { id: string; label: ReactNode; content: ReactNode };
 export function Tabs({ label, tabs, initial }: { label: string; tabs: readonly Tab[]; initial?: string }) {
   return (
     <Primitive.Root defaultValue={initial ?? tabs[0]?.id}>
-      <Primitive.List aria-label={label} className="flex flex-wrap gap-x-6 border-b border-ink font-ui text-sm">
+      <Primitive.List
+        aria-label={label}
+        className="flex flex-wrap gap-x-6 border-b border-ink font-ui text-sm"
+      >
         {tabs.map((tab) => (
           <Primitive.Trigger
             key={tab.id}

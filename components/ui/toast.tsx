@@ -5,7 +5,12 @@ import { createContext, useCallback, useContext, useMemo, useRef, useState, type
 import { cx } from "@/components/cx";
 import { Mark } from "@/components/marks";
 
-type Toast = { id: number; kind: "ok" | "error"; message: string; action?: { label: string; run: () => void } };
+type Toast = {
+  id: number;
+  kind: "ok" | "error";
+  message: string;
+  action?: { label: string; run: () => void };
+};
 type Say = (message: string, options?: { kind?: "ok" | "error"; action?: Toast["action"] }) => void;
 
 const ToastContext = createContext<Say>(() => undefined);
@@ -23,7 +28,10 @@ export function ToastProvider({ children }: { children: ReactNode }) {
   const say = useCallback<Say>(
     (message, options) => {
       const id = next.current++;
-      setToasts((all) => [...all.slice(-2), { id, kind: options?.kind ?? "ok", message, action: options?.action }]);
+      setToasts((all) => [
+        ...all.slice(-2),
+        { id, kind: options?.kind ?? "ok", message, action: options?.action },
+      ]);
       setTimeout(() => drop(id), options?.action ? 15_000 : 7_000);
     },
     [drop],
@@ -32,7 +40,11 @@ export function ToastProvider({ children }: { children: ReactNode }) {
   return (
     <ToastContext.Provider value={value}>
       {children}
-      <div role="status" aria-live="polite" className="no-print pointer-events-none fixed inset-x-4 bottom-4 z-40 grid justify-items-center gap-2 sm:justify-items-end">
+      <div
+        role="status"
+        aria-live="polite"
+        className="no-print pointer-events-none fixed inset-x-4 bottom-4 z-40 grid justify-items-center gap-2 sm:justify-items-end"
+      >
         {toasts.map((toast) => (
           <div
             key={toast.id}
@@ -59,7 +71,12 @@ export function ToastProvider({ children }: { children: ReactNode }) {
                 {toast.action.label}
               </button>
             ) : null}
-            <button type="button" aria-label="Put this message away" className="grid size-9 place-items-center text-quiet hover:text-ink" onClick={() => drop(toast.id)}>
+            <button
+              type="button"
+              aria-label="Put this message away"
+              className="grid size-9 place-items-center text-quiet hover:text-ink"
+              onClick={() => drop(toast.id)}
+            >
               <Mark name="close" size={14} />
             </button>
           </div>

@@ -20,13 +20,20 @@ export type FindingHtml = {
   evidence: EvidenceHtml | null;
 };
 
-export type FindingView<F extends FindingParts> = { finding: F; html: FindingHtml; evidence: Evidence | null };
+export type FindingView<F extends FindingParts> = {
+  finding: F;
+  html: FindingHtml;
+  evidence: Evidence | null;
+};
 
 /**
  * What a page needs to show one finding: the finding itself, its formulas as HTML, and the evidence where it is given.
  * Every formula was printed by our engine, from a reading that had passed its limits.
  */
-export function findingView<F extends FindingParts>(finding: F, evidence: Evidence | null = null): FindingView<F> {
+export function findingView<F extends FindingParts>(
+  finding: F,
+  evidence: Evidence | null = null,
+): FindingView<F> {
   const set = (latex: string | null | undefined) => (latex ? typeset(latex, { own: true }) : null);
   return {
     finding,

@@ -39,7 +39,8 @@ export function typesetText(text: string): string {
     if (found[0] === "\\$") html += "$";
     else if (found[0] === "\\\\") html += "<br>";
     else if (++formulas > TEXT_LIMITS.formulas) html += escapeHtml(found[0]);
-    else if (display !== undefined) html += `<span class="math-block">${typeset(display, { display: true })}</span>`;
+    else if (display !== undefined)
+      html += `<span class="math-block">${typeset(display, { display: true })}</span>`;
     else if (inline !== undefined) html += `<span class="math-inline">${typeset(inline)}</span>`;
   }
   return html + prose(text.slice(at));

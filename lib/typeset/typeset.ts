@@ -48,7 +48,8 @@ const SPACES: Record<string, string> = {
 const OPENS = new Set(["{", "\\left", "\\begin", "\\bgroup", "\\begingroup"]);
 const CLOSES = new Set(["}", "\\right", "\\end", "\\egroup", "\\endgroup"]);
 // Commands that nest without a brace: `\sqrt\sqrt\sqrt x`, `x^x^x` (the latter is an error anyway).
-const PREFIX = /^\\(?:sqrt|frac|[dtc]frac|binom|[dt]binom|overline|underline|hat|bar|vec|tilde|dot|ddot|mathbf|mathrm|mathit|boldsymbol|text|not)$/;
+const PREFIX =
+  /^\\(?:sqrt|frac|[dtc]frac|binom|[dt]binom|overline|underline|hat|bar|vec|tilde|dot|ddot|mathbf|mathrm|mathit|boldsymbol|text|not)$/;
 const TOKEN = /\\(?:[a-zA-Z@]+\*?|[\s\S])|[{}]|[^\\{}]/gu;
 
 /**
@@ -71,7 +72,8 @@ function prepare(latex: string, own: boolean): { refused: string } | { latex: st
     else if (token !== " ") prefixes = 0;
     if (!own && (token === "&" || token === "\\\\") && ++cells > TYPESET_LIMITS.cells)
       return { refused: "too many cells" };
-    if (depth > TYPESET_LIMITS.nesting || prefixes > TYPESET_LIMITS.nesting) return { refused: "nested too deeply" };
+    if (depth > TYPESET_LIMITS.nesting || prefixes > TYPESET_LIMITS.nesting)
+      return { refused: "nested too deeply" };
     out += SPACES[token] ?? token;
   }
   return { latex: out };
