@@ -1,6 +1,4 @@
 import { hash, verify } from "@node-rs/argon2";
-import { z } from "zod";
-import { isCommonPassword } from "./common-passwords";
 
 /** argon2id (which is 2 in this package) with 19 MiB, two passes and one lane, the least that OWASP recommends. */
 const COST = { algorithm: 2, memoryCost: 19_456, timeCost: 2, parallelism: 1 };
@@ -19,10 +17,3 @@ export async function verifyPassword(passwordHash: string | null, password: stri
   const right = await verify(passwordHash ?? (await decoy), given);
   return right && passwordHash !== null && password.length <= 256;
 }
-
-/** The only rules: long enough, not endless, and nothing that is guessed first. Spaces and every script are welcome. */
-export const Password = z
-  .string()
-  .min(12, "Use at least 12 characters; four or five unrelated words are easy to remember.")
-  .max(256, "Use at most 256 characters.")
-  .refine((text) => !isCommonPassword(text), "This one is among the first that are guessed. Choose another.");
