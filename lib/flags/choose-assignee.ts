@@ -18,7 +18,8 @@ export function chooseAssignee(
   openFlags: ReadonlyMap<string, number>,
 ): string | null {
   const able = candidates.filter(
-    ({ userId, chapterIds }) => userId !== claimantId && (chapterIds === null || chapterIds.includes(chapterId)),
+    ({ userId, chapterIds }) =>
+      userId !== claimantId && (chapterIds === null || chapterIds.includes(chapterId)),
   );
   const seconds = able.filter(({ role }) => role !== "lead");
   const chosen = (seconds.length > 0 ? seconds : able)

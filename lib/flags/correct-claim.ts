@@ -22,12 +22,23 @@ export async function correctionFor(
   const conventions = await conventionsAt(work.id, work.conventionsVersion, transaction);
   const now = verifyClaim({ ref: claim.ref, quantity: claim.quantity, claimed: claim.claimed }, conventions);
   if (now.exact === null)
-    throw new AppError("invalid", "Nothing could be recomputed for this claim, so there is no value to take. Reword or withdraw it.", {
-      fields: { word: ["There is no recomputed value to take"] },
-    });
-  const judged = await Finding.findByPk(flag.findingId, { attributes: ["exactText"], rejectOnEmpty: true, transaction });
+    throw new AppError(
+      "invalid",
+      "Nothing could be recomputed for this claim, so there is no value to take. Reword or withdraw it.",
+      {
+        fields: { word: ["There is no recomputed value to take"] },
+      },
+    );
+  const judged = await Finding.findByPk(flag.findingId, {
+    attributes: ["exactText"],
+    rejectOnEmpty: true,
+    transaction,
+  });
   if (judged.exactText !== null && judged.exactText !== now.exact.text)
-    throw new AppError("conflict", "The conventions sheet was changed since this run. Start a new run, then settle what it finds.");
+    throw new AppError(
+      "conflict",
+      "The conventions sheet was changed since this run. Start a new run, then settle what it finds.",
+    );
   const claimed = now.houseForm?.text ?? now.exact.text;
   const again = verifyClaim({ ref: claim.ref, quantity: claim.quantity, claimed }, conventions);
   if (again.verdict !== "confirmed")

@@ -20,10 +20,7 @@ const Details = z.object({
       }),
     )
     .catch([]),
-  place: z
-    .object({ file: z.string(), line: z.number(), column: z.number() })
-    .nullable()
-    .catch(null),
+  place: z.object({ file: z.string(), line: z.number(), column: z.number() }).nullable().catch(null),
 });
 export type Details = z.output<typeof Details>;
 

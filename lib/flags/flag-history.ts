@@ -9,8 +9,11 @@ const text = (value: unknown): string => (typeof value === "string" ? value : ""
 /** What an audit event of a flag says in words. Names of people are looked up by id. */
 const SENTENCES: Record<string, (change: Change, name: (id: unknown) => string) => string> = {
   "flag.raise": ({ after }, name) =>
-    after.assigneeId ? `raised by a run, ${text(after.verdict)}, and given to ${name(after.assigneeId)}` : `raised by a run, ${text(after.verdict)}`,
-  "flag.assign": ({ after }, name) => (after.assigneeId ? `gave it to ${name(after.assigneeId)}` : "took it from everybody"),
+    after.assigneeId
+      ? `raised by a run, ${text(after.verdict)}, and given to ${name(after.assigneeId)}`
+      : `raised by a run, ${text(after.verdict)}`,
+  "flag.assign": ({ after }, name) =>
+    after.assigneeId ? `gave it to ${name(after.assigneeId)}` : "took it from everybody",
   "flag.take": () => "took it",
   "flag.settle": ({ before, after }) =>
     after.word === "correct"
@@ -41,6 +44,13 @@ export async function flagHistory(flagId: string): Promise<HistoryLine[]> {
     const sentence = SENTENCES[action];
     if (!sentence) return [];
     const change = { before: (before ?? {}) as Change["before"], after: (after ?? {}) as Change["after"] };
-    return [{ id, who: actorId ? name(actorId) : "Surdmark", says: sentence(change, name), at: createdAt.toISOString() }];
+    return [
+      {
+        id,
+        who: actorId ? name(actorId) : "Surdmark",
+        says: sentence(change, name),
+        at: createdAt.toISOString(),
+      },
+    ];
   });
 }

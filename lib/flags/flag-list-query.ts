@@ -12,7 +12,12 @@ export function flagIncludes(query: FlagQuery) {
   };
   return [
     { model: Chapter, as: "chapter", attributes: ["id", "number", "title"], required: true },
-    { model: Claim, as: "claim", attributes: ["id", "ref", "quantity", "claimed", "position", "current"], required: true },
+    {
+      model: Claim,
+      as: "claim",
+      attributes: ["id", "ref", "quantity", "claimed", "position", "current"],
+      required: true,
+    },
     {
       model: Finding,
       as: "finding",

@@ -30,5 +30,10 @@ export async function flagNeighbours(
   });
   const ids = rows.map(({ id }) => id);
   const at = ids.indexOf(flagId);
-  return { position: at + 1, of: ids.length, previous: at > 0 ? (ids[at - 1] ?? null) : null, next: ids[at + 1] ?? null };
+  return {
+    position: at + 1,
+    of: ids.length,
+    previous: at > 0 ? (ids[at - 1] ?? null) : null,
+    next: ids[at + 1] ?? null,
+  };
 }

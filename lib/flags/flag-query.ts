@@ -23,7 +23,13 @@ export const FlagQuery = z.object({
   sort: z.enum(FLAG_SORTS).default("place"),
   order: z.enum(["ascending", "descending"]).default("ascending"),
   page: z
-    .union([z.number(), z.string().regex(/^\d{1,4}$/).transform(Number)])
+    .union([
+      z.number(),
+      z
+        .string()
+        .regex(/^\d{1,4}$/)
+        .transform(Number),
+    ])
     .pipe(z.number().int().min(1).max(LAST_PAGE))
     .default(1),
 });
@@ -41,9 +47,17 @@ export function readFlagQuery(params: Params): FlagQuery {
 }
 
 /** The address of a query; what is at its default is left out. `changes` replaces fields and, unless it names one, goes back to the first page. */
-export function flagQueryText(query: FlagQuery, changes: Partial<Record<keyof FlagQuery, string | number | undefined>> = {}): string {
+export function flagQueryText(
+  query: FlagQuery,
+  changes: Partial<Record<keyof FlagQuery, string | number | undefined>> = {},
+): string {
   const merged: Record<string, string | number | undefined> = { ...query, page: 1, ...changes };
-  const defaults: Record<string, string | number> = { state: "open", sort: "place", order: "ascending", page: 1 };
+  const defaults: Record<string, string | number> = {
+    state: "open",
+    sort: "place",
+    order: "ascending",
+    page: 1,
+  };
   const params = new URLSearchParams();
   for (const name of Object.keys(FlagQuery.shape)) {
     const value = merged[name];

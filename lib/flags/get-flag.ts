@@ -31,7 +31,13 @@ import {
   User,
 } from "@/models";
 
-type Loaded = Flag & { chapter: Chapter; claim: Claim; finding: Finding; claimant: User; assignee: User | null };
+type Loaded = Flag & {
+  chapter: Chapter;
+  claim: Claim;
+  finding: Finding;
+  claimant: User;
+  assignee: User | null;
+};
 
 /**
  * Everything that the page of one flag shows.
@@ -53,7 +59,10 @@ export async function getFlag(workId: string, flagId: string, query: FlagQuery, 
   const { claim, chapter, finding, claimant, assignee } = flag;
   const [problem, run, judged, settlement, messages, history, neighbours] = await Promise.all([
     Problem.findByPk(claim.problemId, { rejectOnEmpty: true }),
-    Run.findByPk(flag.runId, { attributes: ["conventionsVersion", "engine", "endedAt"], rejectOnEmpty: true }),
+    Run.findByPk(flag.runId, {
+      attributes: ["conventionsVersion", "engine", "endedAt"],
+      rejectOnEmpty: true,
+    }),
     ClaimVersion.findOne({ where: { claimId: claim.id, number: flag.claimVersion } }),
     currentSettlement(flag.id),
     discussion(flag.id),
@@ -73,7 +82,13 @@ export async function getFlag(workId: string, flagId: string, query: FlagQuery, 
     work: { id: access.work.id, title: access.work.title },
     chapter: { id: chapter.id, number: chapter.number, title: chapter.title },
     problem: { label: problem.label, statement: problem.statement },
-    claim: { id: claim.id, ref: claim.ref, note: claim.note, page: claim.page, changedSince: claim.current !== flag.claimVersion },
+    claim: {
+      id: claim.id,
+      ref: claim.ref,
+      note: claim.note,
+      page: claim.page,
+      changedSince: claim.current !== flag.claimVersion,
+    },
     verdict: finding.verdict as "discrepant" | "contradicted" | "unreadable",
     reason: finding.reason ?? "",
     quantity: { text: quantity, latex: details.reading?.quantityLatex ?? proof?.latex ?? null },
@@ -132,7 +147,12 @@ function permits(
     settle: open && can(person, "flag.settle", subject),
     discuss: can(person, "flag.discuss", subject),
     assign: open && can(person, "flag.assign", subject),
-    take: open && !own && flag.assigneeId !== user.id && access.role !== "referee" && can(person, "flag.settle", subject),
+    take:
+      open &&
+      !own &&
+      flag.assigneeId !== user.id &&
+      access.role !== "referee" &&
+      can(person, "flag.settle", subject),
     undo:
       flag.state === "settled" &&
       settlement !== null &&
@@ -167,7 +187,10 @@ async function currentSettlement(flagId: string) {
 }
 
 /** The number of the first key frozen after this settlement, which then stands for good; null while there is none. */
-export async function frozenAfter({ workId, createdAt }: Pick<Settlement, "workId" | "createdAt">): Promise<number | null> {
+export async function frozenAfter({
+  workId,
+  createdAt,
+}: Pick<Settlement, "workId" | "createdAt">): Promise<number | null> {
   const key = await FrozenKey.findOne({
     attributes: ["number"],
     where: { workId, createdAt: { [Op.gte]: createdAt } },
@@ -180,7 +203,10 @@ async function discussion(flagId: string) {
   const messages = await Message.findAll({
     where: { flagId },
     include: [{ model: User, as: "author", attributes: ["id", "name"], required: true }],
-    order: [["createdAt", "ASC"], ["id", "ASC"]],
+    order: [
+      ["createdAt", "ASC"],
+      ["id", "ASC"],
+    ],
     limit: 500,
   });
   return messages.map((message) => {
@@ -200,11 +226,15 @@ async function sourcePlace(sourceId: string | null, place: { line: number; colum
 async function assignable(workId: string, chapterId: string, claimantId: string) {
   const members = await Membership.findAll({
     where: { workId, role: ["lead", "author", "referee"], userId: { [Op.ne]: claimantId } },
-    include: [{ model: User, as: "user", attributes: ["id", "name"], where: { disabledAt: null }, required: true }],
+    include: [
+      { model: User, as: "user", attributes: ["id", "name"], where: { disabledAt: null }, required: true },
+    ],
     order: [["user", "name", "ASC"]],
   });
   return members
-    .filter(({ role, chapterIds }) => role !== "referee" || chapterIds === null || chapterIds.includes(chapterId))
+    .filter(
+      ({ role, chapterIds }) => role !== "referee" || chapterIds === null || chapterIds.includes(chapterId),
+    )
     .map((member) => {
       const { id, name } = (member as Membership & { user: User }).user;
       return { id, name, role: member.role };

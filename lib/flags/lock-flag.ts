@@ -30,8 +30,16 @@ export async function lockFlag(
   user: SessionUser,
   transaction: Transaction,
 ): Promise<Locked> {
-  const claim = await Claim.findByPk(found.claimId, { lock: transaction.LOCK.UPDATE, rejectOnEmpty: true, transaction });
-  const flag = await Flag.findByPk(found.id, { lock: transaction.LOCK.UPDATE, rejectOnEmpty: true, transaction });
+  const claim = await Claim.findByPk(found.claimId, {
+    lock: transaction.LOCK.UPDATE,
+    rejectOnEmpty: true,
+    transaction,
+  });
+  const flag = await Flag.findByPk(found.id, {
+    lock: transaction.LOCK.UPDATE,
+    rejectOnEmpty: true,
+    transaction,
+  });
   const subject = { chapterId: flag.chapterId, claimantId: flag.claimantId, assigneeId: flag.assigneeId };
   const access = await gate(user, action, flag.workId, subject, transaction);
   return { flag, claim, access };
@@ -45,12 +53,20 @@ export async function refuseStale(flag: Flag, version: number, transaction: Tran
   if (flag.state === "open" && flag.version === version) return;
   if (flag.state === "settled") throw await settledConflict(flag, transaction);
   if (flag.state === "superseded")
-    throw new AppError("conflict", "The claim was changed or confirmed in the meantime, so this flag is closed.", {
-      details: { state: "superseded" },
-    });
-  throw new AppError("conflict", "This flag was changed while you were looking at it. Read it once more, then send this again.", {
-    details: { state: "open", version: flag.version },
-  });
+    throw new AppError(
+      "conflict",
+      "The claim was changed or confirmed in the meantime, so this flag is closed.",
+      {
+        details: { state: "superseded" },
+      },
+    );
+  throw new AppError(
+    "conflict",
+    "This flag was changed while you were looking at it. Read it once more, then send this again.",
+    {
+      details: { state: "open", version: flag.version },
+    },
+  );
 }
 
 async function settledConflict(flag: Flag, transaction: Transaction): Promise<AppError> {
@@ -61,14 +77,22 @@ async function settledConflict(flag: Flag, transaction: Transaction): Promise<Ap
     rejectOnEmpty: true,
     transaction,
   });
-  const settler = await User.findByPk(settlement.settlerId, { attributes: ["name"], rejectOnEmpty: true, transaction });
-  return new AppError("conflict", `${settler.name} has settled this flag in the meantime: ${settlement.word}.`, {
-    details: {
-      state: "settled",
-      by: settler.name,
-      word: settlement.word,
-      reason: settlement.reason,
-      at: settlement.createdAt.toISOString(),
-    },
+  const settler = await User.findByPk(settlement.settlerId, {
+    attributes: ["name"],
+    rejectOnEmpty: true,
+    transaction,
   });
+  return new AppError(
+    "conflict",
+    `${settler.name} has settled this flag in the meantime: ${settlement.word}.`,
+    {
+      details: {
+        state: "settled",
+        by: settler.name,
+        word: settlement.word,
+        reason: settlement.reason,
+        at: settlement.createdAt.toISOString(),
+      },
+    },
+  );
 }

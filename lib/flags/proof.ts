@@ -1,6 +1,13 @@
 import { toText } from "@/lib/symbols/exact-print";
 import { showHalf } from "@/lib/symbols/half";
-import { costOf, evidence, quantityLatex, variants, type Evidence, type Quantity } from "@/lib/symbols/quantity";
+import {
+  costOf,
+  evidence,
+  quantityLatex,
+  variants,
+  type Evidence,
+  type Quantity,
+} from "@/lib/symbols/quantity";
 import type { Conventions } from "@/lib/verify/conventions";
 import { readQuantity } from "@/lib/verify/read-quantity";
 
@@ -45,7 +52,15 @@ export function proofOf(text: string, conventions: Conventions, stored: unknown)
   };
 }
 
-function toRow({ name, does, quantity, phase, factor, value, agrees }: ReturnType<typeof variants>[number]): VariantRow {
+function toRow({
+  name,
+  does,
+  quantity,
+  phase,
+  factor,
+  value,
+  agrees,
+}: ReturnType<typeof variants>[number]): VariantRow {
   const shown = toText(factor);
   return {
     name,
@@ -63,6 +78,10 @@ function isEvidence(stored: unknown): stored is Evidence {
   if (typeof stored !== "object" || stored === null) return false;
   const { rules, formula, terms, value, routes } = stored as Partial<Evidence>;
   return (
-    Array.isArray(rules) && Array.isArray(terms) && Array.isArray(routes) && formula !== undefined && value !== undefined
+    Array.isArray(rules) &&
+    Array.isArray(terms) &&
+    Array.isArray(routes) &&
+    formula !== undefined &&
+    value !== undefined
   );
 }

@@ -122,7 +122,13 @@ async function settledVersions(claimIds: string[], transaction: Transaction): Pr
     attributes: ["claimId", "claimVersion"],
     where: { claimId: claimIds, state: "settled" },
     include: [
-      { model: Settlement, as: "settlements", attributes: [], where: { activeFlagId: { [Op.not]: null } }, required: true },
+      {
+        model: Settlement,
+        as: "settlements",
+        attributes: [],
+        where: { activeFlagId: { [Op.not]: null } },
+        required: true,
+      },
     ],
     // A locking read sees what was committed while this transaction waited for the claims.
     lock: transaction.LOCK.SHARE,
@@ -172,12 +178,19 @@ async function supersede(flag: Flag, finding: Finding, transaction: Transaction)
  * A later run judged the same version again. Only when it says something else does the open flag follow it, which
  * also tells whoever is reading the flag at this moment that what they see has changed.
  */
-async function renewFinding(flag: Flag, finding: Finding, runId: string, transaction: Transaction): Promise<void> {
+async function renewFinding(
+  flag: Flag,
+  finding: Finding,
+  runId: string,
+  transaction: Transaction,
+): Promise<void> {
   const old = await Finding.findByPk(flag.findingId, {
     attributes: ["verdict", "exactText", "reason"],
     transaction,
   });
   const same =
-    old?.verdict === finding.verdict && old?.exactText === finding.exactText && old?.reason === finding.reason;
+    old?.verdict === finding.verdict &&
+    old?.exactText === finding.exactText &&
+    old?.reason === finding.reason;
   if (!same) await flag.update({ findingId: finding.id, runId }, { transaction });
 }

@@ -17,7 +17,10 @@ import { Settlement, User, type Claim } from "@/models";
  * @throws AppError not_found; forbidden for the claimant, or for a referee it is not assigned to; conflict when the flag
  *   is no longer what the person was looking at, with who settled it and how; invalid when there is no value to take
  */
-export async function settleFlag(input: SettleFlag, user: SessionUser): Promise<{ flagId: string; claimed: string }> {
+export async function settleFlag(
+  input: SettleFlag,
+  user: SessionUser,
+): Promise<{ flagId: string; claimed: string }> {
   const found = await findFlag(input.workId, input.flagId, user);
   const { mailId, claimed } = await transact(async (transaction) => {
     const locked = await lockFlag(found, "flag.settle", user, transaction);
@@ -90,7 +93,11 @@ async function tellClaimant(
   settler: SessionUser,
   transaction: Transaction,
 ): Promise<string> {
-  const claimant = await User.findByPk(claim.claimantId, { attributes: ["email"], rejectOnEmpty: true, transaction });
+  const claimant = await User.findByPk(claim.claimantId, {
+    attributes: ["email"],
+    rejectOnEmpty: true,
+    transaction,
+  });
   return post(transaction, {
     kind: "mail",
     payload: {

@@ -25,8 +25,15 @@ export async function undoSettlement(input: UndoSettlement, user: SessionUser): 
       transaction,
     });
     if (!settlement || flag.state !== "settled" || flag.version !== input.version)
-      throw new AppError("conflict", "This flag is no longer settled as you saw it. Reload to see what happened.");
-    const subject = { chapterId: flag.chapterId, claimantId: flag.claimantId, settlerId: settlement.settlerId };
+      throw new AppError(
+        "conflict",
+        "This flag is no longer settled as you saw it. Reload to see what happened.",
+      );
+    const subject = {
+      chapterId: flag.chapterId,
+      claimantId: flag.claimantId,
+      settlerId: settlement.settlerId,
+    };
     await gate(user, "settlement.undo", flag.workId, subject, transaction);
 
     const key = await FrozenKey.findOne({
@@ -37,25 +44,43 @@ export async function undoSettlement(input: UndoSettlement, user: SessionUser): 
       transaction,
     });
     if (key)
-      throw new AppError("conflict", `Key ${key.number} was frozen with this settlement in it. Change the claim instead; the next key will have it.`);
+      throw new AppError(
+        "conflict",
+        `Key ${key.number} was frozen with this settlement in it. Change the claim instead; the next key will have it.`,
+      );
     const expected = settlement.claimVersionAfter ?? settlement.claimVersionBefore;
     const other = await Flag.count({ where: { openClaimId: claim.id }, transaction });
     if (claim.current !== expected || other > 0)
-      throw new AppError("conflict", "The claim was changed after this was settled, so there is nothing left to undo.");
+      throw new AppError(
+        "conflict",
+        "The claim was changed after this was settled, so there is nothing left to undo.",
+      );
 
     const { claimBefore } = settlement;
     const now = { claimed: claim.claimed, withdrawn: claim.withdrawnAt !== null };
     let current = claim.current;
     if (settlement.word === "correct") {
-      current = await addVersion(claim, { claimed: claimBefore.claimed, authorId: user.id, origin: "undone" }, transaction);
-      const judged = await Finding.findByPk(flag.findingId, { attributes: ["verdict"], rejectOnEmpty: true, transaction });
+      current = await addVersion(
+        claim,
+        { claimed: claimBefore.claimed, authorId: user.id, origin: "undone" },
+        transaction,
+      );
+      const judged = await Finding.findByPk(flag.findingId, {
+        attributes: ["verdict"],
+        rejectOnEmpty: true,
+        transaction,
+      });
       await claim.update(
         { claimed: claimBefore.claimed, current, verdict: judged.verdict, findingId: flag.findingId },
         { transaction },
       );
     }
-    if (settlement.word === "withdraw" && !claimBefore.withdrawn) await claim.update({ withdrawnAt: null }, { transaction });
-    await settlement.update({ activeFlagId: null, undoneAt: new Date(), undoneById: user.id }, { transaction });
+    if (settlement.word === "withdraw" && !claimBefore.withdrawn)
+      await claim.update({ withdrawnAt: null }, { transaction });
+    await settlement.update(
+      { activeFlagId: null, undoneAt: new Date(), undoneById: user.id },
+      { transaction },
+    );
     await flag.update({ state: "open", openClaimId: claim.id, claimVersion: current }, { transaction });
     await audit(transaction, {
       workId: flag.workId,

@@ -21,7 +21,9 @@ export function composeKey(input: {
 }): KeyContent {
   const { work, number, frozenAt, frozenBy, conventions, sheet, previous, states, findings } = input;
   const kept = states.filter(({ claim }) => claim.withdrawnAt === null);
-  const chapters = new Map(states.map(({ chapter }) => [chapter.id, { number: String(chapter.number), title: chapter.title }]));
+  const chapters = new Map(
+    states.map(({ chapter }) => [chapter.id, { number: String(chapter.number), title: chapter.title }]),
+  );
   return {
     format: "surdmark-key-1",
     work: { title: work.title, kind: work.kind },
@@ -40,7 +42,9 @@ export function composeKey(input: {
         chapter: String(state.chapter.number),
         problem: state.problem.label,
         ref: state.claim.ref,
-        settlement: keepSettlement(state.settlements.find(({ settlement }) => settlement.word === "withdraw") ?? null),
+        settlement: keepSettlement(
+          state.settlements.find(({ settlement }) => settlement.word === "withdraw") ?? null,
+        ),
       })),
   };
 }
@@ -50,7 +54,8 @@ function composeClaim(state: ClaimState, finding: Finding | undefined): KeyClaim
   if (!finding) throw new Error(`Claim ${claim.id} was not recomputed.`);
   const printed = finding.houseForm ?? finding.exact;
   const asClaimed = { text: claim.claimed, latex: finding.reading?.claimedLatex ?? null };
-  const settled = settledNow(state) ?? state.settlements.find(({ settlement }) => settlement.word === "reword") ?? null;
+  const settled =
+    settledNow(state) ?? state.settlements.find(({ settlement }) => settlement.word === "reword") ?? null;
   return {
     id: claim.id,
     chapter: String(chapter.number),

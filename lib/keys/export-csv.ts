@@ -52,8 +52,15 @@ export function keyAsCsv(content: KeyContent, sha256: string, made: Exported): s
     exported_by: made.by,
     exported_at: made.at,
   }));
-  const safe = rows.map((row) => Object.fromEntries(Object.entries(row).map(([name, text]) => [name, safeCell(text)])));
-  return stringify(safe, { header: true, columns: [...COLUMNS], record_delimiter: "windows", escape_formulas: false });
+  const safe = rows.map((row) =>
+    Object.fromEntries(Object.entries(row).map(([name, text]) => [name, safeCell(text)])),
+  );
+  return stringify(safe, {
+    header: true,
+    columns: [...COLUMNS],
+    record_delimiter: "windows",
+    escape_formulas: false,
+  });
 }
 
 /**

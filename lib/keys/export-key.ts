@@ -20,7 +20,12 @@ const FORMATS = {
  * A frozen key as a file. Written into the audit of the work.
  * @throws AppError not_found as for reading the key
  */
-export async function exportKey(workId: string, number: number, format: KeyFormat, user: SessionUser): Promise<KeyExport> {
+export async function exportKey(
+  workId: string,
+  number: number,
+  format: KeyFormat,
+  user: SessionUser,
+): Promise<KeyExport> {
   const key = await getKey(workId, number, user);
   const made: Exported = { by: user.name, at: new Date().toISOString() };
   const { write, contentType, ending } = FORMATS[format];

@@ -18,7 +18,9 @@ const SPECIAL: Record<string, string> = {
 
 /** A person's text for LaTeX: no character of it is a command, and it stays on its line. */
 export function latexText(text: string): string {
-  return text.replace(/\s+/g, " ").replace(/[\\{}$&#_%^~<>|]/g, (character) => SPECIAL[character] ?? character);
+  return text
+    .replace(/\s+/g, " ")
+    .replace(/[\\{}$&#_%^~<>|]/g, (character) => SPECIAL[character] ?? character);
 }
 
 /**
@@ -30,7 +32,9 @@ export function keyAsLatex(content: KeyContent, sha256: string, made: Exported):
   const comment = (text: string) => `% ${text.replace(/\s+/g, " ")}`;
   return [
     comment(`${work.title}: answers, frozen key ${number}`),
-    comment(`frozen ${frozenAt} by ${frozenBy}; ${content.claims.length} answers; recomputed by Surdmark ${content.engine}`),
+    comment(
+      `frozen ${frozenAt} by ${frozenBy}; ${content.claims.length} answers; recomputed by Surdmark ${content.engine}`,
+    ),
     comment(`SHA-256 of the key's canonical JSON: ${sha256}`),
     comment(`exported ${made.at} by ${made.by}`),
     "%",
@@ -69,13 +73,16 @@ export function keyAsLatex(content: KeyContent, sha256: string, made: Exported):
 
 /** One answer; what was let stand or waived says so in a footnote, with the convention it relies on. */
 function answerLine(claim: KeyClaim): string {
-  const quantity = claim.quantityLatex ? `$${claim.quantityLatex}$` : `\\texttt{${latexText(claim.quantity)}}`;
+  const quantity = claim.quantityLatex
+    ? `$${claim.quantityLatex}$`
+    : `\\texttt{${latexText(claim.quantity)}}`;
   const answer = claim.answer.latex ? `$${claim.answer.latex}$` : `\\texttt{${latexText(claim.answer.text)}}`;
   return `\\item[${latexText(claim.ref)}] ${quantity} $=$ ${answer}${footnote(claim)}`;
 }
 
 function footnote({ settlement, waiver }: KeyClaim): string {
-  if (waiver) return `\\footnote{Not decided by the verification; waived by ${latexText(waiver.by)}: ${latexText(waiver.reason)}}`;
+  if (waiver)
+    return `\\footnote{Not decided by the verification; waived by ${latexText(waiver.by)}: ${latexText(waiver.reason)}}`;
   if (settlement?.word !== "stet") return "";
   const relies = settlement.convention ? ` (${latexText(settlement.convention)})` : "";
   return `\\footnote{Stet${relies}: ${latexText(settlement.reason ?? "")}}`;

@@ -18,7 +18,10 @@ import { FrozenKey, Run, Work } from "@/models";
  * @throws AppError not_found; forbidden for all but a lead; invalid when the typed name is another; conflict when
  *   something hinders the key, a run is under way, a recomputed value disagrees, or another key was frozen meanwhile
  */
-export async function freezeKey(input: FreezeKey, user: SessionUser): Promise<{ number: number; sha256: string }> {
+export async function freezeKey(
+  input: FreezeKey,
+  user: SessionUser,
+): Promise<{ number: number; sha256: string }> {
   const access = await gate(user, "key.freeze", input.workId);
   if (input.confirmation.toLowerCase() !== `key ${input.number}`) {
     const message = `Type key ${input.number} to freeze it`;
@@ -35,7 +38,10 @@ export async function freezeKey(input: FreezeKey, user: SessionUser): Promise<{ 
 }
 
 const frozenMeanwhile = (number: number) =>
-  new AppError("conflict", `Key ${number} has been frozen in the meantime. Look at it before you freeze another.`);
+  new AppError(
+    "conflict",
+    `Key ${number} has been frozen in the meantime. Look at it before you freeze another.`,
+  );
 
 async function freeze(
   input: FreezeKey,
@@ -45,7 +51,11 @@ async function freeze(
 ): Promise<{ number: number; sha256: string }> {
   const { workId } = input;
   // The work first: one freezing at a time, and no new claim, run or sheet of conventions while it lasts.
-  const work = await Work.findByPk(workId, { lock: transaction.LOCK.UPDATE, rejectOnEmpty: true, transaction });
+  const work = await Work.findByPk(workId, {
+    lock: transaction.LOCK.UPDATE,
+    rejectOnEmpty: true,
+    transaction,
+  });
   await gate(user, "key.freeze", workId, {}, transaction);
   const states = await loadClaimStates(workId, transaction, true);
   const number = await nextKeyNumber(workId, transaction);
@@ -67,11 +77,29 @@ async function freeze(
     transaction,
   });
   const now = new Date();
-  const content = composeKey({ work, number, frozenAt: now, frozenBy: user.name, conventions, sheet, previous, states, findings });
+  const content = composeKey({
+    work,
+    number,
+    frozenAt: now,
+    frozenBy: user.name,
+    conventions,
+    sheet,
+    previous,
+    states,
+    findings,
+  });
   const json = canonicalJson(content);
   const hash = sha256(json);
   const key = await FrozenKey.create(
-    { workId, number, canonicalJson: json, sha256: hash, claims: content.claims.length, frozenById: user.id, createdAt: now },
+    {
+      workId,
+      number,
+      canonicalJson: json,
+      sha256: hash,
+      claims: content.claims.length,
+      frozenById: user.id,
+      createdAt: now,
+    },
     { transaction },
   );
   await audit(transaction, {

@@ -30,10 +30,20 @@ type Loaded = Claim & {
  * Every claim of a work, in the order of print, with its flags, settlements and waiver.
  * @param lock locks the claims, in the order of their ids, before anything about them is read
  */
-export async function loadClaimStates(workId: string, transaction?: Transaction, lock = false): Promise<ClaimState[]> {
+export async function loadClaimStates(
+  workId: string,
+  transaction?: Transaction,
+  lock = false,
+): Promise<ClaimState[]> {
   const inside = { transaction: transaction ?? null };
   if (lock && transaction)
-    await Claim.findAll({ attributes: ["id"], where: { workId }, order: [["id", "ASC"]], lock: transaction.LOCK.UPDATE, transaction });
+    await Claim.findAll({
+      attributes: ["id"],
+      where: { workId },
+      order: [["id", "ASC"]],
+      lock: transaction.LOCK.UPDATE,
+      transaction,
+    });
   const claims = (await Claim.findAll({
     where: { workId },
     include: [
@@ -60,7 +70,10 @@ export async function loadClaimStates(workId: string, transaction?: Transaction,
     settlementsInForce(workId, transaction),
     Waiver.findAll({ where: { workId }, ...inside }),
   ]);
-  const names = await namesOf(waivers.map(({ namedById }) => namedById), transaction);
+  const names = await namesOf(
+    waivers.map(({ namedById }) => namedById),
+    transaction,
+  );
   const under = new Map(runs.map(({ id, conventionsVersion }) => [id, conventionsVersion]));
   const flagOf = new Map(openFlags.map((flag) => [flag.claimId, flag as Flag & { assignee: User | null }]));
   return claims.map((claim) => {
@@ -79,7 +92,10 @@ export async function loadClaimStates(workId: string, transaction?: Transaction,
   });
 }
 
-async function settlementsInForce(workId: string, transaction?: Transaction): Promise<Map<string, InForce[]>> {
+async function settlementsInForce(
+  workId: string,
+  transaction?: Transaction,
+): Promise<Map<string, InForce[]>> {
   const inside = { transaction: transaction ?? null };
   const rows = await Settlement.findAll({
     where: { workId, activeFlagId: { [Op.not]: null } },
@@ -87,7 +103,11 @@ async function settlementsInForce(workId: string, transaction?: Transaction): Pr
     order: [["createdAt", "DESC"]],
     ...inside,
   });
-  const flags = await Flag.findAll({ attributes: ["id", "claimId"], where: { workId, state: "settled" }, ...inside });
+  const flags = await Flag.findAll({
+    attributes: ["id", "claimId"],
+    where: { workId, state: "settled" },
+    ...inside,
+  });
   const claimOf = new Map(flags.map(({ id, claimId }) => [id, claimId]));
   const byClaim = new Map<string, InForce[]>();
   for (const settlement of rows) {
@@ -101,12 +121,19 @@ async function settlementsInForce(workId: string, transaction?: Transaction): Pr
 
 async function namesOf(ids: string[], transaction?: Transaction): Promise<Map<string, string>> {
   if (ids.length === 0) return new Map();
-  const users = await User.findAll({ attributes: ["id", "name"], where: { id: ids }, transaction: transaction ?? null });
+  const users = await User.findAll({
+    attributes: ["id", "name"],
+    where: { id: ids },
+    transaction: transaction ?? null,
+  });
   return new Map(users.map(({ id, name }) => [id, name]));
 }
 
 /** The settlement that speaks of the claim as it now stands. */
-export function settledNow({ claim, settlements }: Pick<ClaimState, "claim" | "settlements">): InForce | null {
+export function settledNow({
+  claim,
+  settlements,
+}: Pick<ClaimState, "claim" | "settlements">): InForce | null {
   return (
     settlements.find(
       ({ settlement }) => (settlement.claimVersionAfter ?? settlement.claimVersionBefore) === claim.current,

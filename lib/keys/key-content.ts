@@ -69,7 +69,8 @@ export function canonicalJson(content: KeyContent): string {
 export const sha256 = (text: string): string => createHash("sha256").update(text, "utf8").digest("hex");
 
 function refuseNumbers(value: unknown, path: string): void {
-  if (typeof value === "number" || typeof value === "bigint") throw new Error(`A key holds numbers as text only: ${path}`);
+  if (typeof value === "number" || typeof value === "bigint")
+    throw new Error(`A key holds numbers as text only: ${path}`);
   if (typeof value === "object" && value !== null)
     for (const [name, inner] of Object.entries(value)) refuseNumbers(inner, `${path}/${name}`);
 }

@@ -21,7 +21,10 @@ export async function nameWaiver(input: NameWaiver, user: SessionUser): Promise<
     if (!claim) throw notFound();
     await gate(user, "waiver.name", input.workId, { chapterId: claim.chapterId }, transaction);
     if (claim.current !== input.claimVersion || claim.verdict !== "undecided" || claim.withdrawnAt !== null)
-      throw new AppError("conflict", `${claim.ref} is no longer undecided as you saw it. Reload to see how it stands.`);
+      throw new AppError(
+        "conflict",
+        `${claim.ref} is no longer undecided as you saw it. Reload to see how it stands.`,
+      );
     const { id: claimId, workId, current: claimVersion } = claim;
     try {
       const waiver = await Waiver.create(

@@ -34,7 +34,14 @@ export type Preflight = {
   ready: boolean;
 };
 
-const ORDER: readonly Hindrance[] = ["unchecked", "old-conventions", "open-flag", "unsettled", "reword", "undecided"];
+const ORDER: readonly Hindrance[] = [
+  "unchecked",
+  "old-conventions",
+  "open-flag",
+  "unsettled",
+  "reword",
+  "undecided",
+];
 
 /**
  * What still keeps the next key of a work from being frozen, in the order in which it is best mended.
@@ -74,19 +81,31 @@ export async function sheetInForce(
 
 /** The number that the next key will have. */
 export async function nextKeyNumber(workId: string, transaction?: Transaction): Promise<number> {
-  const last = await FrozenKey.max<number | null, FrozenKey>("number", { where: { workId }, transaction: transaction ?? null });
+  const last = await FrozenKey.max<number | null, FrozenKey>("number", {
+    where: { workId },
+    transaction: transaction ?? null,
+  });
   return (last ?? 0) + 1;
 }
 
 /** The report on all claims of a work; ready when there is at least one claim and nothing hinders. */
-export function judgeStates(states: readonly ClaimState[], sheet: SheetInForce): Omit<Preflight, "number" | "running"> {
+export function judgeStates(
+  states: readonly ClaimState[],
+  sheet: SheetInForce,
+): Omit<Preflight, "number" | "running"> {
   const judged = states.map((state) => ({ state, hindrance: hindranceOf(state, sheet) }));
   const kept = judged.filter(({ state }) => state.claim.withdrawnAt === null);
   const groups = ORDER.flatMap((kind) => {
     const found = kept.filter(({ hindrance }) => hindrance === kind);
     return found.length === 0
       ? []
-      : [{ kind, total: found.length, lines: found.slice(0, LISTED).map(({ state }) => toLine(state, kind)) }];
+      : [
+          {
+            kind,
+            total: found.length,
+            lines: found.slice(0, LISTED).map(({ state }) => toLine(state, kind)),
+          },
+        ];
   });
   const fit = kept.filter(({ hindrance }) => hindrance === null);
   return {
@@ -118,7 +137,10 @@ function toLine(state: ClaimState, kind: Hindrance): PreflightLine {
   });
   switch (kind) {
     case "open-flag":
-      return line(`${work}/flags/${openFlag?.id ?? ""}`, openFlag?.assignee ?? "a lead author, who gives it to somebody");
+      return line(
+        `${work}/flags/${openFlag?.id ?? ""}`,
+        openFlag?.assignee ?? "a lead author, who gives it to somebody",
+      );
     case "reword":
       return line(`${work}/claims/${claim.id}`, claimant);
     case "undecided":

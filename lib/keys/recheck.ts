@@ -6,9 +6,14 @@ import type { Conventions } from "@/lib/verify/conventions";
 import { verifyClaim, type Finding } from "@/lib/verify/verify-claim";
 
 /** What each claim of a key was found to be, by its id. */
-export type Recheck = { conventions: Conventions; byText: Map<string, Finding>; byClaim: Map<string, Finding> };
+export type Recheck = {
+  conventions: Conventions;
+  byText: Map<string, Finding>;
+  byClaim: Map<string, Finding>;
+};
 
-const textOf = ({ quantity, claimed }: { quantity: string; claimed: string }) => `${quantity}\u0000${claimed}`;
+const textOf = ({ quantity, claimed }: { quantity: string; claimed: string }) =>
+  `${quantity}\u0000${claimed}`;
 
 /**
  * Recomputes every claim that will stand in the key. A key rests on no stored verdict: what a run confirmed must be
@@ -31,7 +36,10 @@ export async function recheckAll(
     if (claim.withdrawnAt !== null) continue;
     const text = textOf(claim);
     const finding =
-      byText.get(text) ?? verifyClaim({ ref: claim.ref, quantity: claim.quantity, claimed: claim.claimed }, conventions, { slips: false });
+      byText.get(text) ??
+      verifyClaim({ ref: claim.ref, quantity: claim.quantity, claimed: claim.claimed }, conventions, {
+        slips: false,
+      });
     if (!byText.has(text)) {
       byText.set(text, finding);
       fresh += 1;
@@ -53,4 +61,5 @@ function needsConfirming(state: ClaimState): boolean {
   return state.claim.verdict !== "undecided" && settledNow(state)?.settlement.word !== "stet";
 }
 
-const isConfirmed = ({ verdict }: Finding) => verdict === "confirmed" || verdict === "confirmed-not-house-form";
+const isConfirmed = ({ verdict }: Finding) =>
+  verdict === "confirmed" || verdict === "confirmed-not-house-form";

@@ -24,19 +24,34 @@ export default async function KeysPage({ params }: PageProps<"/works/[workId]/ke
         A frozen key is what leaves the house: numbered, hashed, and never changed.
       </PageHeader>
       {preflight ? (
-        <Section title={`Preflight for key ${preflight.number}`} id="preflight" aside={standing(preflight.fit, preflight.claims)}>
+        <Section
+          title={`Preflight for key ${preflight.number}`}
+          id="preflight"
+          aside={standing(preflight.fit, preflight.claims)}
+        >
           <PreflightList workId={workId} preflight={preflight} mayWaive={may.waive} />
           {may.freeze ? (
-            <FreezePanel workId={workId} number={preflight.number} claims={preflight.claims} ready={preflight.ready} />
+            <FreezePanel
+              workId={workId}
+              number={preflight.number}
+              claims={preflight.claims}
+              ready={preflight.ready}
+            />
           ) : preflight.ready ? (
             <p className="mt-5 text-quiet">A lead author can freeze key {preflight.number} now.</p>
           ) : null}
         </Section>
       ) : null}
-      <Section title="Frozen" id="frozen" aside={keys.length > 0 ? `${keys.length} ${keys.length === 1 ? "key" : "keys"}` : null}>
+      <Section
+        title="Frozen"
+        id="frozen"
+        aside={keys.length > 0 ? `${keys.length} ${keys.length === 1 ? "key" : "keys"}` : null}
+      >
         {keys.length === 0 ? (
           <EmptyState title="No key has been frozen yet" mark="seal">
-            {preflight ? "When preflight finds nothing more to do, a lead author freezes the first." : "It will be here as soon as a lead author has frozen it."}
+            {preflight
+              ? "When preflight finds nothing more to do, a lead author freezes the first."
+              : "It will be here as soon as a lead author has frozen it."}
           </EmptyState>
         ) : (
           <ul>
@@ -54,17 +69,25 @@ export default async function KeysPage({ params }: PageProps<"/works/[workId]/ke
 }
 
 const standing = (fit: number, claims: number) =>
-  claims === 0 ? "no claims yet" : fit === claims ? `all ${claims} claims are fit` : `${fit} of ${claims} claims are fit`;
+  claims === 0
+    ? "no claims yet"
+    : fit === claims
+      ? `all ${claims} claims are fit`
+      : `${fit} of ${claims} claims are fit`;
 
 function KeyEntry({ workId, line }: { workId: string; line: KeyLine }) {
   return (
     <li className="grid gap-x-8 gap-y-1 border-b border-rule py-4 sm:grid-cols-[14rem_minmax(0,1fr)] sm:items-center">
-      <Link href={`/works/${workId}/keys/${line.number}`} className="no-underline hover:underline hover:underline-offset-4">
+      <Link
+        href={`/works/${workId}/keys/${line.number}`}
+        className="no-underline hover:underline hover:underline-offset-4"
+      >
         <KeySeal number={line.number} size={34} />
       </Link>
       <div className="min-w-0">
         <p>
-          {line.claims} {line.claims === 1 ? "answer" : "answers"}, frozen <Time at={line.frozenAt} withClock /> by {line.frozenBy}
+          {line.claims} {line.claims === 1 ? "answer" : "answers"}, frozen{" "}
+          <Time at={line.frozenAt} withClock /> by {line.frozenBy}
         </p>
         <p className="font-mono text-xs break-all text-quiet">
           <span className="font-ui">SHA-256</span> {line.sha256}

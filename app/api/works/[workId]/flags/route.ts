@@ -27,6 +27,7 @@ function readQuery(params: URLSearchParams): FlagQuery {
   }
   const read = z.strictObject(FlagQuery.shape).safeParse(given);
   if (read.success && Object.keys(fields).length === 0) return read.data;
-  for (const issue of read.error?.issues ?? []) (fields[String(issue.path[0] ?? "query")] ??= []).push(issue.message);
+  for (const issue of read.error?.issues ?? [])
+    (fields[String(issue.path[0] ?? "query")] ??= []).push(issue.message);
   throw new AppError("invalid", "The address asks for something the queue does not know.", { fields });
 }

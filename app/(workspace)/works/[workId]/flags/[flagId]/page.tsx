@@ -50,7 +50,8 @@ export default async function FlagPage(props: Props) {
         title={<>Claim {flag.claim.ref}</>}
         actions={<Leafing flag={flag} queue={queue} asked={asked} />}
       >
-        <VerdictMark verdict={flag.verdict} withWord className="text-base" /> in chapter {flag.chapter.number}, {flag.chapter.title}
+        <VerdictMark verdict={flag.verdict} withWord className="text-base" /> in chapter {flag.chapter.number}
+        , {flag.chapter.title}
       </PageHeader>
       <Comparison flag={flag} />
       <div className="mt-10 grid gap-x-12 gap-y-10 md:grid-cols-[minmax(0,1fr)_20rem]">
@@ -78,7 +79,11 @@ export default async function FlagPage(props: Props) {
           ) : null}
         </aside>
       </div>
-      <Section title="Evidence" id="evidence" aside={flag.proof?.evidence ? <>recomputed by Surdmark {flag.proof.evidence.version}</> : null}>
+      <Section
+        title="Evidence"
+        id="evidence"
+        aside={flag.proof?.evidence ? <>recomputed by Surdmark {flag.proof.evidence.version}</> : null}
+      >
         <Evidence flag={flag} />
       </Section>
       <Orbit flag={flag} />

@@ -37,7 +37,11 @@ export function FlagFilters({
     <div className="no-print mb-6">
       <nav aria-label="Which flags" className="flex flex-wrap gap-x-6 gap-y-1 font-work text-lg">
         {STATES.map(({ value, label }) => (
-          <Choice key={value} href={`${path}${flagQueryText(query, { state: value })}`} chosen={query.state === value}>
+          <Choice
+            key={value}
+            href={`${path}${flagQueryText(query, { state: value })}`}
+            chosen={query.state === value}
+          >
             {label}
             {value === "open" && open > 0 ? <span className="old-style text-quiet"> {open}</span> : null}
           </Choice>
@@ -54,12 +58,21 @@ export function FlagFilters({
       </nav>
       <details className="group/narrow mt-2 border-y border-rule" open={isNarrowed(query)}>
         <summary className="flex min-h-11 items-center gap-2 font-ui text-sm text-quiet hover:text-ink">
-          <svg viewBox="0 0 10 10" width="10" height="10" aria-hidden="true" className="transition-transform group-open/narrow:rotate-90">
+          <svg
+            viewBox="0 0 10 10"
+            width="10"
+            height="10"
+            aria-hidden="true"
+            className="transition-transform group-open/narrow:rotate-90"
+          >
             <path d="M3 1 7.5 5 3 9" fill="none" stroke="currentColor" strokeWidth="1.5" />
           </svg>
           Narrow the list
         </summary>
-        <Form action={path} className="grid gap-4 pb-4 sm:grid-cols-2 lg:grid-cols-[1fr_1fr_1fr_1fr_auto] lg:items-end">
+        <Form
+          action={path}
+          className="grid gap-4 pb-4 sm:grid-cols-2 lg:grid-cols-[1fr_1fr_1fr_1fr_auto] lg:items-end"
+        >
           {query.state === "open" ? null : <input type="hidden" name="state" value={query.state} />}
           {query.sort === "place" ? null : <input type="hidden" name="sort" value={query.sort} />}
           {query.order === "ascending" ? null : <input type="hidden" name="order" value={query.order} />}
@@ -75,7 +88,13 @@ export function FlagFilters({
             label="Chapter"
             name="chapter"
             defaultValue={query.chapter ?? ""}
-            options={[ANY, ...filters.chapters.map(({ id, number, title }) => ({ value: id, label: `${number}. ${title}` }))]}
+            options={[
+              ANY,
+              ...filters.chapters.map(({ id, number, title }) => ({
+                value: id,
+                label: `${number}. ${title}`,
+              })),
+            ]}
           />
           <Select
             key={`a${query.assignee}`}

@@ -1,6 +1,12 @@
 "use client";
 
-import { createColumnHelper, rowPaginationFeature, rowSortingFeature, tableFeatures, useTable } from "@tanstack/react-table";
+import {
+  createColumnHelper,
+  rowPaginationFeature,
+  rowSortingFeature,
+  tableFeatures,
+  useTable,
+} from "@tanstack/react-table";
 import Link from "next/link";
 import useSWR from "swr";
 
@@ -23,8 +29,16 @@ const NO_CHANGE = () => undefined;
 
 const columns = helper.columns([
   helper.display({ id: "place", header: "Claim", cell: ({ row }) => <Place row={row.original} /> }),
-  helper.display({ id: "values", header: "As claimed, as recomputed", cell: ({ row }) => <Values row={row.original} /> }),
-  helper.display({ id: "verdict", header: "What the verifier says", cell: ({ row }) => <Says row={row.original} /> }),
+  helper.display({
+    id: "values",
+    header: "As claimed, as recomputed",
+    cell: ({ row }) => <Values row={row.original} />,
+  }),
+  helper.display({
+    id: "verdict",
+    header: "What the verifier says",
+    cell: ({ row }) => <Says row={row.original} />,
+  }),
   helper.display({ id: "claimant", header: "Claimant", cell: ({ row }) => row.original.claimant.name }),
   helper.display({ id: "assignee", header: "Waits for", cell: ({ row }) => <Assignee row={row.original} /> }),
   helper.display({ id: "age", header: "Raised", cell: ({ row }) => <Time at={row.original.raisedAt} /> }),
@@ -39,7 +53,15 @@ async function fetchList(path: string): Promise<FlagList> {
 }
 
 /** The queue as a proof-reader's list. Kept fresh while it is looked at; sorting and paging are links. */
-export function FlagTable({ workId, query, initial }: { workId: string; query: FlagQuery; initial: FlagList }) {
+export function FlagTable({
+  workId,
+  query,
+  initial,
+}: {
+  workId: string;
+  query: FlagQuery;
+  initial: FlagList;
+}) {
   const path = `/works/${workId}/flags`;
   const here = flagQueryText(query, { page: query.page });
   const { data, error } = useSWR<FlagList, Error>(`/api${path}${here}`, fetchList, {
@@ -70,7 +92,8 @@ export function FlagTable({ workId, query, initial }: { workId: string; query: F
     const next = sorted === "asc" ? "descending" : "ascending";
     return {
       href: `${path}${flagQueryText(query, { sort: id, order: next })}`,
-      direction: sorted === "asc" ? ("ascending" as const) : sorted === "desc" ? ("descending" as const) : null,
+      direction:
+        sorted === "asc" ? ("ascending" as const) : sorted === "desc" ? ("descending" as const) : null,
     };
   };
   if (list.rows.length === 0) return <NothingListed path={path} query={query} list={list} />;
@@ -147,21 +170,33 @@ function Values({ row }: { row: FlagRow }) {
   return (
     <div className="grid w-fit max-w-full grid-cols-[auto_auto_minmax(0,auto)] items-center gap-x-2.5 overflow-x-auto font-work">
       <span className="row-span-2">
-        {row.quantityHtml ? <MathHtml html={row.quantityHtml} /> : <code className="font-mono text-xs break-all">{row.quantity}</code>}
+        {row.quantityHtml ? (
+          <MathHtml html={row.quantityHtml} />
+        ) : (
+          <code className="font-mono text-xs break-all">{row.quantity}</code>
+        )}
       </span>
       <span className="text-blue" aria-hidden="true">
         =
       </span>
       <span className="py-1 text-blue">
         <span className="sr-only">claimed </span>
-        {row.claimedHtml ? <MathHtml html={row.claimedHtml} /> : <code className="font-mono text-xs break-all">{row.claimed}</code>}
+        {row.claimedHtml ? (
+          <MathHtml html={row.claimedHtml} />
+        ) : (
+          <code className="font-mono text-xs break-all">{row.claimed}</code>
+        )}
       </span>
       <span className="text-red" aria-hidden="true">
         =
       </span>
       <span className="py-1 text-red">
         <span className="sr-only">recomputed </span>
-        {row.exactHtml ? <MathHtml html={row.exactHtml} /> : <span className="font-ui text-xs">nothing recomputed</span>}
+        {row.exactHtml ? (
+          <MathHtml html={row.exactHtml} />
+        ) : (
+          <span className="font-ui text-xs">nothing recomputed</span>
+        )}
       </span>
     </div>
   );
@@ -198,13 +233,28 @@ function NothingListed({ path, query, list }: { path: string; query: FlagQuery; 
   const work = path.replace(/\/flags$/, "");
   if (isNarrowed(query) || list.total > 0)
     return (
-      <EmptyState title="No flag matches" mark="undecided" action={<LinkButton href={`${path}${flagQueryText({ ...query, verdict: undefined, chapter: undefined, assignee: undefined, slip: undefined })}`}>Show the whole list</LinkButton>}>
-        Nothing {query.state === "open" ? "that waits to be settled " : ""}answers to what the list was narrowed to.
+      <EmptyState
+        title="No flag matches"
+        mark="undecided"
+        action={
+          <LinkButton
+            href={`${path}${flagQueryText({ ...query, verdict: undefined, chapter: undefined, assignee: undefined, slip: undefined })}`}
+          >
+            Show the whole list
+          </LinkButton>
+        }
+      >
+        Nothing {query.state === "open" ? "that waits to be settled " : ""}answers to what the list was
+        narrowed to.
       </EmptyState>
     );
   if (query.state !== "open")
     return (
-      <EmptyState title="Nothing here yet" mark="undecided" action={<LinkButton href={path}>Show what waits to be settled</LinkButton>}>
+      <EmptyState
+        title="Nothing here yet"
+        mark="undecided"
+        action={<LinkButton href={path}>Show what waits to be settled</LinkButton>}
+      >
         {query.state === "settled" ? "No flag has been settled." : "No flag has been raised or closed."}
       </EmptyState>
     );
@@ -221,7 +271,8 @@ function NothingListed({ path, query, list }: { path: string; query: FlagQuery; 
         </>
       }
     >
-      A run raises a flag for each claim that it finds discrepant, contradicted or unreadable, and gives it to a second author.
+      A run raises a flag for each claim that it finds discrepant, contradicted or unreadable, and gives it to
+      a second author.
     </EmptyState>
   );
 }

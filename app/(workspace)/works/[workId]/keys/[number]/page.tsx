@@ -18,7 +18,9 @@ import { Answers } from "./_components/answers";
 import { Changes } from "./_components/changes";
 import { SettledList } from "./_components/settled-list";
 
-export async function generateMetadata({ params }: PageProps<"/works/[workId]/keys/[number]">): Promise<Metadata> {
+export async function generateMetadata({
+  params,
+}: PageProps<"/works/[workId]/keys/[number]">): Promise<Metadata> {
   const { number } = await params;
   return { title: KeyNumber.safeParse(number).success ? `Key ${number}` : "Key" };
 }
@@ -42,11 +44,20 @@ export default async function KeyPage({ params }: PageProps<"/works/[workId]/key
         title={<KeySeal number={key.number} size={44} className="text-2xl [&_.small-caps]:text-2xl" />}
         actions={<Downloads path={`/api/works/${workId}/keys/${key.number}`} />}
       >
-        {content.work.title}, {content.claims.length} {content.claims.length === 1 ? "answer" : "answers"}, frozen{" "}
-        <Time at={content.frozenAt} withClock /> by {content.frozenBy}
+        {content.work.title}, {content.claims.length} {content.claims.length === 1 ? "answer" : "answers"},
+        frozen <Time at={content.frozenAt} withClock /> by {content.frozenBy}
       </PageHeader>
       {key.latest > key.number ? (
-        <Notice kind="info" className="mb-6" title={`Key ${key.latest} is later than this one`} action={<LinkButton size="small" href={`${path}/${key.latest}`}>Open key {key.latest}</LinkButton>}>
+        <Notice
+          kind="info"
+          className="mb-6"
+          title={`Key ${key.latest} is later than this one`}
+          action={
+            <LinkButton size="small" href={`${path}/${key.latest}`}>
+              Open key {key.latest}
+            </LinkButton>
+          }
+        >
           This key stays as it was frozen.
         </Notice>
       ) : null}
@@ -54,7 +65,9 @@ export default async function KeyPage({ params }: PageProps<"/works/[workId]/key
         <Answers content={content} />
       </Sheet>
       <SettledList content={content} />
-      {key.changes && content.previous ? <Changes changes={key.changes} previous={content.previous.number} /> : null}
+      {key.changes && content.previous ? (
+        <Changes changes={key.changes} previous={content.previous.number} />
+      ) : null}
       <Section title="What it rests on" id="certificate" className="mt-12">
         <Certificate view={key} />
       </Section>
@@ -89,17 +102,31 @@ function Certificate({ view }: { view: KeyView }) {
             <>
               <code className="font-mono text-xs break-all">{sha256}</code>
               <span className={intact ? "block text-green" : "block text-red"}>
-                {intact ? "computed again just now from what is stored: the same" : "what is stored no longer has this hash"}
+                {intact
+                  ? "computed again just now from what is stored: the same"
+                  : "what is stored no longer has this hash"}
               </span>
             </>
           ),
         },
-        { term: "Hashed", value: "the canonical JSON (RFC 8785) of the key without the members sha256 and export" },
-        ...(content.previous ? [{ term: "Key before", value: `key ${content.previous.number}, ${content.previous.sha256.slice(0, 16)}…` }] : []),
+        {
+          term: "Hashed",
+          value: "the canonical JSON (RFC 8785) of the key without the members sha256 and export",
+        },
+        ...(content.previous
+          ? [
+              {
+                term: "Key before",
+                value: `key ${content.previous.number}, ${content.previous.sha256.slice(0, 16)}…`,
+              },
+            ]
+          : []),
         { term: "Recomputed by", value: `Surdmark ${content.engine}, two routes` },
         ...CONVENTION_CHOICES.map((choice) => ({
           term: CONVENTION_NAMES[choice.id],
-          value: choice.options.find(({ value }) => value === String(choices[choice.id]))?.label ?? String(choices[choice.id]),
+          value:
+            choice.options.find(({ value }) => value === String(choices[choice.id]))?.label ??
+            String(choices[choice.id]),
         })),
         { term: "Conventions sheet", value: `version ${content.conventionsVersion}` },
       ]}

@@ -11,7 +11,17 @@ import { useToast } from "@/components/ui/toast";
 import { freezeKeyAction } from "../actions";
 
 /** The lead's signature: the name of the key, typed. Offered only when nothing prevents it. */
-export function FreezePanel({ workId, number, claims, ready }: { workId: string; number: number; claims: number; ready: boolean }) {
+export function FreezePanel({
+  workId,
+  number,
+  claims,
+  ready,
+}: {
+  workId: string;
+  number: number;
+  claims: number;
+  ready: boolean;
+}) {
   const router = useRouter();
   const say = useToast();
   const [pending, start] = useTransition();
@@ -39,10 +49,15 @@ export function FreezePanel({ workId, number, claims, ready }: { workId: string;
     });
   };
   return (
-    <form onSubmit={submit} noValidate className="mt-6 grid max-w-measure gap-4 border-2 border-ink bg-sheet p-5">
+    <form
+      onSubmit={submit}
+      noValidate
+      className="mt-6 grid max-w-measure gap-4 border-2 border-ink bg-sheet p-5"
+    >
       <p>
-        Freezing takes {claims === 1 ? "the one claim" : `all ${claims} claims`} as they now stand, recomputes each once more, and writes them
-        down for good. Nobody can change or delete a frozen key; a later key says what changed.
+        Freezing takes {claims === 1 ? "the one claim" : `all ${claims} claims`} as they now stand, recomputes
+        each once more, and writes them down for good. Nobody can change or delete a frozen key; a later key
+        says what changed.
       </p>
       {refusal ? (
         <Notice
@@ -68,7 +83,13 @@ export function FreezePanel({ workId, number, claims, ready }: { workId: string;
         error={error}
       />
       <div>
-        <Button type="submit" variant="primary" mark={<Mark name="seal" />} pending={pending} pendingLabel="Freezing">
+        <Button
+          type="submit"
+          variant="primary"
+          mark={<Mark name="seal" />}
+          pending={pending}
+          pendingLabel="Freezing"
+        >
           Freeze key {number}
         </Button>
       </div>

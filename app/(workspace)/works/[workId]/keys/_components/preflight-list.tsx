@@ -47,14 +47,34 @@ const WORDS: Record<Hindrance, { one: string; many: (n: number) => string; todo:
 };
 
 /** In order, what still prevents the next key: each line leads to its place and names who can act. */
-export function PreflightList({ workId, preflight, mayWaive }: { workId: string; preflight: Preflight; mayWaive: boolean }) {
+export function PreflightList({
+  workId,
+  preflight,
+  mayWaive,
+}: {
+  workId: string;
+  preflight: Preflight;
+  mayWaive: boolean;
+}) {
   const { groups, running, claims, ready, stets, withdrawn, waivers } = preflight;
   if (claims === 0)
-    return <p className="text-quiet">There is no claim to freeze yet. Add claims to a chapter, then start a run.</p>;
+    return (
+      <p className="text-quiet">
+        There is no claim to freeze yet. Add claims to a chapter, then start a run.
+      </p>
+    );
   return (
     <div className="grid gap-6">
       {running ? (
-        <Notice kind="info" title="A run is under way" action={<Link className="link" href={`/works/${workId}/runs/${running.runId}`}>See how far it has come</Link>}>
+        <Notice
+          kind="info"
+          title="A run is under way"
+          action={
+            <Link className="link" href={`/works/${workId}/runs/${running.runId}`}>
+              See how far it has come
+            </Link>
+          }
+        >
           What it finds may change this list. A key can be frozen when it has ended.
         </Notice>
       ) : null}
@@ -71,7 +91,9 @@ export function PreflightList({ workId, preflight, mayWaive }: { workId: string;
         <p className="font-ui text-sm text-quiet">
           {[
             stets > 0 ? `${stets} let stand by a stet` : "",
-            waivers.length > 0 ? `${waivers.length} undecided with a waiver (${waivers.map(({ ref, by }) => `${ref}, ${by}`).join("; ")})` : "",
+            waivers.length > 0
+              ? `${waivers.length} undecided with a waiver (${waivers.map(({ ref, by }) => `${ref}, ${by}`).join("; ")})`
+              : "",
             withdrawn > 0 ? `${withdrawn} withdrawn and left out` : "",
           ]
             .filter(Boolean)
@@ -102,7 +124,12 @@ function Group({ workId, group, mayWaive }: { workId: string; group: PreflightGr
               <span className="font-ui text-xs text-quiet">{line.who}</span>
             </span>
             {group.kind === "undecided" && mayWaive ? (
-              <WaiverForm workId={workId} claimId={line.claimId} claimVersion={line.claimVersion} claimRef={line.ref} />
+              <WaiverForm
+                workId={workId}
+                claimId={line.claimId}
+                claimVersion={line.claimVersion}
+                claimRef={line.ref}
+              />
             ) : null}
           </li>
         ))}

@@ -9,7 +9,17 @@ import { useToast } from "@/components/ui/toast";
 import { nameWaiverAction } from "../actions";
 
 /** A lead answers for an undecided claim by name and reason; both are printed in the key. */
-export function WaiverForm({ workId, claimId, claimVersion, claimRef }: { workId: string; claimId: string; claimVersion: number; claimRef: string }) {
+export function WaiverForm({
+  workId,
+  claimId,
+  claimVersion,
+  claimRef,
+}: {
+  workId: string;
+  claimId: string;
+  claimVersion: number;
+  claimRef: string;
+}) {
   const [pending, start] = useTransition();
   const [error, setError] = useState<string | null>(null);
   const say = useToast();
@@ -26,7 +36,14 @@ export function WaiverForm({ workId, claimId, claimVersion, claimRef }: { workId
   return (
     <Disclosure summary="Name a waiver" className="border-0!">
       <form onSubmit={submit} className="grid gap-3" noValidate>
-        <TextArea id={id} name="reason" rows={2} label={`Why ${claimRef} may be frozen undecided`} hint="Printed in the key with your name." error={error} />
+        <TextArea
+          id={id}
+          name="reason"
+          rows={2}
+          label={`Why ${claimRef} may be frozen undecided`}
+          hint="Printed in the key with your name."
+          error={error}
+        />
         <div>
           <Button type="submit" size="small" pending={pending}>
             Name the waiver

@@ -45,18 +45,27 @@ export function AssignPanel({ workId, flagId, version, assigneeId, people, mayTa
         <Button
           variant="blue"
           pending={pending}
-          onClick={() => run(() => takeFlagAction({ workId, flagId, version }), "This flag now waits for you.")}
+          onClick={() =>
+            run(() => takeFlagAction({ workId, flagId, version }), "This flag now waits for you.")
+          }
         >
           Take it yourself
         </Button>
       ) : null}
       {mayAssign ? (
-        <form key={`${assigneeId}`} onSubmit={assign} className="grid grid-cols-[minmax(0,1fr)_auto] items-end gap-3">
+        <form
+          key={`${assigneeId}`}
+          onSubmit={assign}
+          className="grid grid-cols-[minmax(0,1fr)_auto] items-end gap-3"
+        >
           <Select
             label="Give it to"
             name="assigneeId"
             defaultValue={assigneeId ?? ""}
-            options={[{ value: "", label: "nobody yet" }, ...people.map(({ id, name, role }) => ({ value: id, label: `${name} (${role})` }))]}
+            options={[
+              { value: "", label: "nobody yet" },
+              ...people.map(({ id, name, role }) => ({ value: id, label: `${name} (${role})` })),
+            ]}
           />
           <Button type="submit" pending={pending}>
             Give

@@ -23,11 +23,25 @@ export function Comparison({ flag }: { flag: FlagView }) {
               <code className="font-mono text-lg break-all">{flag.quantity.text}</code>
             )}
           </div>
-          <ValueLine pencil="blue" label={`as claimed by ${flag.claimant.name}`} typed={claimed.text} latex={claimed.latex} decimal={claimed.decimal} />
+          <ValueLine
+            pencil="blue"
+            label={`as claimed by ${flag.claimant.name}`}
+            typed={claimed.text}
+            latex={claimed.latex}
+            decimal={claimed.decimal}
+          />
           {exact ? (
-            <ValueLine pencil="red" label="as recomputed" typed={exact.text} latex={exact.latex} decimal={shorten(exact.decimal)} />
+            <ValueLine
+              pencil="red"
+              label="as recomputed"
+              typed={exact.text}
+              latex={exact.latex}
+              decimal={shorten(exact.decimal)}
+            />
           ) : (
-            <p className="font-ui text-sm text-red">Nothing could be recomputed: {VERDICTS.unreadable.means.toLowerCase()}</p>
+            <p className="font-ui text-sm text-red">
+              Nothing could be recomputed: {VERDICTS.unreadable.means.toLowerCase()}
+            </p>
           )}
         </div>
         {flag.errors.length > 0 ? <ReadingErrors flag={flag} /> : null}
@@ -59,7 +73,9 @@ function ValueLine({
   decimal: string | null;
 }) {
   return (
-    <div className={`grid min-w-0 grid-cols-[auto_minmax(0,1fr)] items-center gap-x-4 ${pencil === "blue" ? "text-blue" : "text-red"}`}>
+    <div
+      className={`grid min-w-0 grid-cols-[auto_minmax(0,1fr)] items-center gap-x-4 ${pencil === "blue" ? "text-blue" : "text-red"}`}
+    >
       <span className="font-work text-2xl sm:text-3xl" aria-hidden="true">
         =
       </span>
@@ -68,7 +84,9 @@ function ValueLine({
           {latex ? <Math own latex={latex} /> : <code className="font-mono text-lg break-all">{typed}</code>}
         </div>
         <div className="text-right font-ui text-xs leading-snug">
-          {decimal ? <span className="tabular block text-base whitespace-pre">{aligned(decimal)}</span> : null}
+          {decimal ? (
+            <span className="tabular block text-base whitespace-pre">{aligned(decimal)}</span>
+          ) : null}
           <span className="flex items-center justify-end gap-1.5">
             <Mark name={pencil === "blue" ? "person" : "run"} size={13} />
             {label}
@@ -84,7 +102,9 @@ const aligned = (decimal: string) => (decimal.startsWith("-") ? `− ${decimal.s
 
 /** Eight digits are enough to see a difference; all twenty stand in the evidence. */
 function shorten(decimal: string): string {
-  return decimal.length > 11 && !/e/i.test(decimal) ? decimal.slice(0, decimal.startsWith("-") ? 11 : 10) + "…" : decimal;
+  return decimal.length > 11 && !/e/i.test(decimal)
+    ? decimal.slice(0, decimal.startsWith("-") ? 11 : 10) + "…"
+    : decimal;
 }
 
 function Diagnosis({ flag }: { flag: FlagView }) {
@@ -93,12 +113,18 @@ function Diagnosis({ flag }: { flag: FlagView }) {
     return (
       <MarginNote pencil="red" mark={flag.verdict} title={VERDICTS[flag.verdict].word}>
         <p>{flag.reason || VERDICTS[flag.verdict].means}</p>
-        {flag.verdict === "discrepant" ? <p className="mt-2">No known slip leads from the one value to the other.</p> : null}
+        {flag.verdict === "discrepant" ? (
+          <p className="mt-2">No known slip leads from the one value to the other.</p>
+        ) : null}
       </MarginNote>
     );
   return (
     <>
-      <MarginNote pencil="red" mark={flag.verdict} title={first.certainty === "likely" ? "Likely so" : "Possibly so"}>
+      <MarginNote
+        pencil="red"
+        mark={flag.verdict}
+        title={first.certainty === "likely" ? "Likely so" : "Possibly so"}
+      >
         <p>{first.says}</p>
         {first.formulaLatex ? (
           <div className="mt-3 overflow-x-auto text-ink">

@@ -27,7 +27,9 @@ export function Discussion({ flag }: { flag: FlagView }) {
       {flag.may.discuss ? (
         <MessageForm workId={flag.work.id} flagId={flag.id} />
       ) : (
-        <p className="font-ui text-sm text-quiet">You can read this discussion; the flag is assigned to somebody else.</p>
+        <p className="font-ui text-sm text-quiet">
+          You can read this discussion; the flag is assigned to somebody else.
+        </p>
       )}
     </>
   );

@@ -12,7 +12,8 @@ type Kept = NonNullable<Proof["evidence"]>;
 /** Everything that a person needs to redo the value by hand; each part unfolds by itself. */
 export function Evidence({ flag }: { flag: FlagView }) {
   const { proof } = flag;
-  if (!proof) return <p className="text-quiet">The quantity could not be read, so there is nothing to recompute.</p>;
+  if (!proof)
+    return <p className="text-quiet">The quantity could not be read, so there is nothing to recompute.</p>;
   const { evidence, variants } = proof;
   const agreeing = variants?.filter(({ agrees }) => agrees).length ?? 0;
   return (
@@ -33,7 +34,9 @@ export function Evidence({ flag }: { flag: FlagView }) {
           <Disclosure summary="From the sum to the value">
             <Steps evidence={evidence} />
           </Disclosure>
-          <Disclosure summary={`${evidence.routes.length === 2 ? "Two routes agree" : "Route taken"}: ${evidence.routes.map(({ name }) => name).join(", ")}`}>
+          <Disclosure
+            summary={`${evidence.routes.length === 2 ? "Two routes agree" : "Route taken"}: ${evidence.routes.map(({ name }) => name).join(", ")}`}
+          >
             <ul className="grid gap-1 font-ui text-sm">
               {evidence.routes.map((route) => (
                 <li key={route.name} className="flex flex-wrap gap-x-4">
@@ -101,11 +104,7 @@ function Rules({ evidence, zero }: { evidence: Kept; zero: string[] }) {
           </li>
         ))}
       </ul>
-      {zero.length > 0 ? (
-        <p className="mt-3">
-          Therefore it vanishes: {zero.join("; ")}
-        </p>
-      ) : null}
+      {zero.length > 0 ? <p className="mt-3">Therefore it vanishes: {zero.join("; ")}</p> : null}
     </>
   );
 }
@@ -129,7 +128,8 @@ function Steps({ evidence }: { evidence: Kept }) {
         <Math key={step} own display wide align="start" latex={step} />
       ))}
       <p className="border-t border-rule pt-2">
-        <Math own latex={value.latex} /> <span className="tabular font-ui text-sm break-all text-quiet">≈ {value.decimal}</span>
+        <Math own latex={value.latex} />{" "}
+        <span className="tabular font-ui text-sm break-all text-quiet">≈ {value.decimal}</span>
       </p>
     </div>
   );

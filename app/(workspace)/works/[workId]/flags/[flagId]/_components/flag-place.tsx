@@ -18,7 +18,14 @@ export function FlagPlace({ flag }: { flag: FlagView }) {
         </Link>
       ),
     },
-    { term: "Claim", value: <Link className="link" href={`${work}/claims/${flag.claim.id}`}>{flag.claim.ref}</Link> },
+    {
+      term: "Claim",
+      value: (
+        <Link className="link" href={`${work}/claims/${flag.claim.id}`}>
+          {flag.claim.ref}
+        </Link>
+      ),
+    },
     ...(flag.claim.page ? [{ term: "Page", value: flag.claim.page }] : []),
     ...(flag.place
       ? [
@@ -41,7 +48,10 @@ export function FlagPlace({ flag }: { flag: FlagView }) {
   return (
     <Section title="In the work" id="place">
       {flag.problem.statement ? (
-        <blockquote className="mb-4 max-h-80 overflow-y-auto border-l border-blue pl-3 text-base" tabIndex={0}>
+        <blockquote
+          className="mb-4 max-h-80 overflow-y-auto border-l border-blue pl-3 text-base"
+          tabIndex={0}
+        >
           <span className="old-style mr-2 font-semibold">{flag.problem.label}</span>
           <MathText text={flag.problem.statement} />
         </blockquote>

@@ -19,7 +19,10 @@ export function Orbit({ flag }: { flag: FlagView }) {
     >
       <ul className="grid gap-x-10 sm:grid-cols-2 lg:grid-cols-3">
         {claims.map((claim) => (
-          <li key={claim.id} className="flex min-w-0 items-center justify-between gap-4 border-b border-rule py-2.5">
+          <li
+            key={claim.id}
+            className="flex min-w-0 items-center justify-between gap-4 border-b border-rule py-2.5"
+          >
             <span className="min-w-0">
               <Link href={`/works/${flag.work.id}/claims/${claim.id}`} className="link font-work">
                 {claim.ref}

@@ -23,8 +23,16 @@ type Conflict = { message: string; state?: string; reason?: string; at?: string 
 
 const REASON = {
   correct: { label: "Note for the claimant", hint: "Only if there is something to add.", optional: true },
-  stet: { label: "Reason", hint: "Why the printed value stands although the recomputed one differs. It is printed in the key.", optional: false },
-  reword: { label: "What has to change", hint: "The claimant reads this; the claim waits until they have saved a new version.", optional: false },
+  stet: {
+    label: "Reason",
+    hint: "Why the printed value stands although the recomputed one differs. It is printed in the key.",
+    optional: false,
+  },
+  reword: {
+    label: "What has to change",
+    hint: "The claimant reads this; the claim waits until they have saved a new version.",
+    optional: false,
+  },
   withdraw: { label: "Reason", hint: "For the history of the claim.", optional: true },
 } as const;
 
@@ -59,7 +67,8 @@ export function SettleForm(view: SettleView) {
         return;
       }
       for (const [name, messages] of Object.entries(result.fields ?? {}))
-        if (name === "word" || name === "reason" || name === "convention") form.setError(name, { message: messages[0] });
+        if (name === "word" || name === "reason" || name === "convention")
+          form.setError(name, { message: messages[0] });
       form.setError("root", { message: result.message });
     },
     () => setAttempt((count) => count + 1),
@@ -74,8 +83,12 @@ export function SettleForm(view: SettleView) {
   const summary: SummaryItem[] = [
     ...(errors.word?.message ? [{ field: "settle-correct", message: errors.word.message }] : []),
     ...(errors.reason?.message ? [{ field: "settle-reason", message: errors.reason.message }] : []),
-    ...(errors.convention?.message ? [{ field: "settle-convention", message: errors.convention.message }] : []),
-    ...(errors.root?.message && !errors.word && !errors.reason && !errors.convention ? [{ message: errors.root.message }] : []),
+    ...(errors.convention?.message
+      ? [{ field: "settle-convention", message: errors.convention.message }]
+      : []),
+    ...(errors.root?.message && !errors.word && !errors.reason && !errors.convention
+      ? [{ message: errors.root.message }]
+      : []),
   ];
   return (
     <form onSubmit={(event) => void submit(event)} noValidate className="grid gap-5">
@@ -175,7 +188,11 @@ function ConflictNotice({ conflict }: { conflict: Conflict }) {
         {conflict.state === "settled" ? (
           <>
             {" "}
-            You can put it into the <Link className="link" href="#discussion">discussion</Link>.
+            You can put it into the{" "}
+            <Link className="link" href="#discussion">
+              discussion
+            </Link>
+            .
           </>
         ) : null}
       </p>

@@ -20,7 +20,11 @@ export function Settled({ flag, next, queue }: { flag: FlagView; next: string | 
   if (!settlement)
     return (
       <Section title="Closed" id="settle">
-        <Notice kind="info" title="The claim was changed or confirmed after this flag was raised" action={onward}>
+        <Notice
+          kind="info"
+          title="The claim was changed or confirmed after this flag was raised"
+          action={onward}
+        >
           There is nothing left to settle here. A later run judges the claim as it now stands.
         </Notice>
       </Section>
@@ -39,11 +43,22 @@ export function Settled({ flag, next, queue }: { flag: FlagView; next: string | 
             <span className="text-quiet">Relies on:</span> {settlement.convention}
           </p>
         ) : null}
-        {settlement.reason ? <blockquote className="border-l border-blue pl-3 whitespace-pre-line">{settlement.reason}</blockquote> : null}
+        {settlement.reason ? (
+          <blockquote className="border-l border-blue pl-3 whitespace-pre-line">
+            {settlement.reason}
+          </blockquote>
+        ) : null}
       </div>
       <div className="mt-5 flex flex-wrap items-center gap-4">
         {onward}
-        {flag.may.undo ? <UndoButton workId={flag.work.id} flagId={flag.id} version={flag.version} claimRef={flag.claim.ref} /> : null}
+        {flag.may.undo ? (
+          <UndoButton
+            workId={flag.work.id}
+            flagId={flag.id}
+            version={flag.version}
+            claimRef={flag.claim.ref}
+          />
+        ) : null}
         {settlement.frozenIn !== null ? (
           <p className="font-ui text-sm text-quiet">
             <Link className="link" href={`/works/${flag.work.id}/keys/${settlement.frozenIn}`}>
@@ -57,14 +72,27 @@ export function Settled({ flag, next, queue }: { flag: FlagView; next: string | 
   );
 }
 
-function Outcome({ flag, settlement, claim }: { flag: FlagView; settlement: NonNullable<FlagView["settlement"]>; claim: string }) {
+function Outcome({
+  flag,
+  settlement,
+  claim,
+}: {
+  flag: FlagView;
+  settlement: NonNullable<FlagView["settlement"]>;
+  claim: string;
+}) {
   switch (settlement.word) {
     case "correct":
       return (
         <p>
           The <Link href={claim}>claim</Link> now reads{" "}
-          {settlement.now?.latex ? <Math own latex={settlement.now.latex} /> : <code className="font-mono">{settlement.now?.text}</code>} instead of{" "}
-          <code className="font-mono text-sm">{settlement.before}</code>, and {flag.claimant.name} was told.
+          {settlement.now?.latex ? (
+            <Math own latex={settlement.now.latex} />
+          ) : (
+            <code className="font-mono">{settlement.now?.text}</code>
+          )}{" "}
+          instead of <code className="font-mono text-sm">{settlement.before}</code>, and {flag.claimant.name}{" "}
+          was told.
         </p>
       );
     case "stet":
@@ -72,7 +100,8 @@ function Outcome({ flag, settlement, claim }: { flag: FlagView; settlement: NonN
     case "reword":
       return (
         <p>
-          The <Link href={claim}>claim</Link> waits for {flag.claimant.name} to write a new version, and for a run to confirm it.
+          The <Link href={claim}>claim</Link> waits for {flag.claimant.name} to write a new version, and for a
+          run to confirm it.
         </p>
       );
     case "withdraw":

@@ -14,7 +14,10 @@ export function Terms({ evidence }: { evidence: Kept }) {
       <p className="mt-1 mb-4 font-ui text-xs text-quiet">{formula.source}</p>
       {shown.length > 0 ? (
         <div className="max-w-sheet">
-          <TableFrame caption={summary ? `First, largest and last of ${summary.count} terms` : "Terms of the sum"} captionHidden={!summary}>
+          <TableFrame
+            caption={summary ? `First, largest and last of ${summary.count} terms` : "Terms of the sum"}
+            captionHidden={!summary}
+          >
             <thead role="rowgroup">
               <tr role="row">
                 <ColumnHead>k</ColumnHead>

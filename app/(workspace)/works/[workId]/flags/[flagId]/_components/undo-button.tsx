@@ -9,7 +9,17 @@ import { useToast } from "@/components/ui/toast";
 import { undoSettlementAction } from "../actions";
 
 /** Takes a settlement back; the flag is then open again. */
-export function UndoButton({ workId, flagId, version, claimRef }: { workId: string; flagId: string; version: number; claimRef: string }) {
+export function UndoButton({
+  workId,
+  flagId,
+  version,
+  claimRef,
+}: {
+  workId: string;
+  flagId: string;
+  version: number;
+  claimRef: string;
+}) {
   const [pending, start] = useTransition();
   const [error, setError] = useState<string | null>(null);
   const say = useToast();

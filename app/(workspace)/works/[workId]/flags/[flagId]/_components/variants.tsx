@@ -9,7 +9,10 @@ export function Variants({ variants, kind }: { variants: readonly VariantRow[]; 
   return (
     <ol className="grid grid-cols-[repeat(auto-fill,minmax(17rem,1fr))] gap-x-8 font-work">
       {variants.map((variant, i) => (
-        <li key={`${variant.name} ${i}`} className="grid grid-cols-[2rem_minmax(0,1fr)_auto] items-center gap-x-3 border-b border-rule py-2">
+        <li
+          key={`${variant.name} ${i}`}
+          className="grid grid-cols-[2rem_minmax(0,1fr)_auto] items-center gap-x-3 border-b border-rule py-2"
+        >
           <span className="tabular font-ui text-xs text-quiet">{i + 1}</span>
           <span className="min-w-0" title={variant.does}>
             <SmallSymbol entries={variant.entries} kind={kind} />

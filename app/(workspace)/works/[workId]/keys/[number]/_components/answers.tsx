@@ -6,7 +6,10 @@ import type { KeyClaim, KeyContent } from "@/lib/keys/key-content";
 /** The answers as they would stand at the back of the book: by chapter, in two columns where there is room. */
 export function Answers({ content }: { content: KeyContent }) {
   const chapters = content.chapters
-    .map((chapter) => ({ chapter, claims: content.claims.filter((claim) => claim.chapter === chapter.number) }))
+    .map((chapter) => ({
+      chapter,
+      claims: content.claims.filter((claim) => claim.chapter === chapter.number),
+    }))
     .filter(({ claims }) => claims.length > 0);
   return (
     <div className="grid gap-12">
@@ -33,9 +36,17 @@ function Answer({ claim }: { claim: KeyClaim }) {
     <li className="grid break-inside-avoid grid-cols-[4.5rem_minmax(0,1fr)_auto] items-center gap-x-3 border-b border-rule py-2">
       <b className="old-style font-semibold break-words">{claim.ref}</b>
       <span className="min-w-0 overflow-x-auto py-0.5">
-        {quantityLatex ? <Math own latex={quantityLatex} /> : <code className="font-mono text-sm">{claim.quantity}</code>}
+        {quantityLatex ? (
+          <Math own latex={quantityLatex} />
+        ) : (
+          <code className="font-mono text-sm">{claim.quantity}</code>
+        )}
         {" = "}
-        {answer.latex ? <Math own latex={answer.latex} /> : <code className="font-mono text-sm">{answer.text}</code>}
+        {answer.latex ? (
+          <Math own latex={answer.latex} />
+        ) : (
+          <code className="font-mono text-sm">{answer.text}</code>
+        )}
       </span>
       {waiver ? (
         <a href="#settled" className="font-ui text-xs no-underline">

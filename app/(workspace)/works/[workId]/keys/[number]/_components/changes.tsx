@@ -13,7 +13,10 @@ export function Changes({ changes, previous }: { changes: KeyChanges; previous: 
       {conventions.length > 0 ? <p className="mb-3">The conventions sheet was changed.</p> : null}
       <ul>
         {changed.map(({ before, after }) => (
-          <li key={after.id} className="grid gap-x-6 border-b border-rule py-2.5 sm:grid-cols-[6rem_minmax(0,1fr)] sm:items-center">
+          <li
+            key={after.id}
+            className="grid gap-x-6 border-b border-rule py-2.5 sm:grid-cols-[6rem_minmax(0,1fr)] sm:items-center"
+          >
             <b className="old-style font-semibold">{after.ref}</b>
             <span className="flex min-w-0 flex-wrap items-center gap-x-4 overflow-x-auto">
               <del className="text-quiet decoration-red">

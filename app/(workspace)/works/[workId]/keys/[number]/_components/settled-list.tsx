@@ -12,12 +12,22 @@ export function SettledList({ content }: { content: KeyContent }) {
   const { withdrawn } = content;
   if (claims.length + withdrawn.length === 0) return null;
   return (
-    <Section title="Settled by a second author" id="settled" className="mt-12" aside={`${claims.length + withdrawn.length} of the claims`}>
+    <Section
+      title="Settled by a second author"
+      id="settled"
+      className="mt-12"
+      aside={`${claims.length + withdrawn.length} of the claims`}
+    >
       <ul>
         {claims.map((claim) => (
           <Line key={claim.id} claimRef={claim.ref} mark={<WordOf claim={claim} />}>
             {claim.waiver ? (
-              <Said by={claim.waiver.by} at={claim.waiver.at} reason={claim.waiver.reason} convention={null} />
+              <Said
+                by={claim.waiver.by}
+                at={claim.waiver.at}
+                reason={claim.waiver.reason}
+                convention={null}
+              />
             ) : claim.settlement ? (
               <>
                 {claim.settlement.word === "stet" && claim.value ? (
@@ -32,7 +42,11 @@ export function SettledList({ content }: { content: KeyContent }) {
         ))}
         {withdrawn.map((gone) => (
           <Line key={gone.ref} claimRef={gone.ref} mark={<SettleMark word="withdraw" />}>
-            {gone.settlement ? <Said {...gone.settlement} /> : <span className="text-quiet">taken out by its authors</span>}
+            {gone.settlement ? (
+              <Said {...gone.settlement} />
+            ) : (
+              <span className="text-quiet">taken out by its authors</span>
+            )}
           </Line>
         ))}
       </ul>
