@@ -72,201 +72,207 @@ export function ClaimCheck({
   const claimedFault = fault("claimed");
 
   return (
-    <div className="galley-line claim-check">
-      <div className="galley-text min-w-0">
-        <fieldset className="font-ui text-sm">
-          <legend className="sr-only">How to type the quantity</legend>
-          <div className="flex flex-wrap gap-x-5 border-b border-rule">
-            {WAYS.map((choice) => (
-              <label
-                key={choice.value}
-                className={cx(
-                  "-mb-px inline-flex min-h-11 cursor-pointer items-center border-b-3 border-transparent text-quiet hover:text-ink",
-                  "has-checked:border-blue has-checked:text-ink has-focus-visible:outline-2 has-focus-visible:outline-blue",
-                )}
-              >
-                <input
-                  type="radio"
-                  name={`${base}-way`}
-                  value={choice.value}
-                  checked={way === choice.value}
-                  onChange={() => {
-                    // The other symbol starts empty, unless what is typed already is one.
-                    if (
-                      choice.value !== "line" &&
-                      claim.quantity !== "" &&
-                      !cellsOf(choice.value, claim.quantity)
-                    )
-                      put({ quantity: "" });
-                    setWay(choice.value);
-                  }}
-                  className="sr-only"
-                />
-                {choice.label}
-              </label>
-            ))}
-          </div>
-        </fieldset>
-
-        <div className="mt-5 flex flex-wrap items-center gap-x-4 gap-y-4">
-          <div className="min-w-0">
-            {way === "line" ? (
-              <span className="block font-ui">
-                <label htmlFor={`${base}-quantity`} className="mb-1 block text-sm font-medium">
-                  Quantity
+    <div>
+      <div className="galley-line">
+        <div className="galley-text min-w-0">
+          <fieldset className="font-ui text-sm">
+            <legend className="sr-only">How to type the quantity</legend>
+            <div className="flex flex-wrap gap-x-5 border-b border-rule">
+              {WAYS.map((choice) => (
+                <label
+                  key={choice.value}
+                  className={cx(
+                    "-mb-px inline-flex min-h-11 cursor-pointer items-center border-b-3 border-transparent text-quiet hover:text-ink",
+                    "has-checked:border-blue has-checked:text-ink has-focus-visible:outline-2 has-focus-visible:outline-blue",
+                  )}
+                >
+                  <input
+                    type="radio"
+                    name={`${base}-way`}
+                    value={choice.value}
+                    checked={way === choice.value}
+                    onChange={() => {
+                      // The other symbol starts empty, unless what is typed already is one.
+                      if (
+                        choice.value !== "line" &&
+                        claim.quantity !== "" &&
+                        !cellsOf(choice.value, claim.quantity)
+                      )
+                        put({ quantity: "" });
+                      setWay(choice.value);
+                    }}
+                    className="sr-only"
+                  />
+                  {choice.label}
                 </label>
-                <input
+              ))}
+            </div>
+          </fieldset>
+
+          <div className="mt-5 flex flex-wrap items-center gap-x-4 gap-y-4">
+            <div className="min-w-0">
+              {way === "line" ? (
+                <span className="block font-ui">
+                  <label htmlFor={`${base}-quantity`} className="mb-1 block text-sm font-medium">
+                    Quantity
+                  </label>
+                  <input
+                    id={`${base}-quantity`}
+                    value={claim.quantity}
+                    onChange={(event) => put({ quantity: event.target.value })}
+                    aria-invalid={quantityFault || errors?.quantity ? true : undefined}
+                    aria-describedby={
+                      cx(
+                        quantityFault && `${base}-fault-quantity`,
+                        errors?.quantity && `${base}-error-quantity`,
+                      ) || undefined
+                    }
+                    placeholder={
+                      cgOrder === "j1m1j2m2"
+                        ? "(1 1 2; 0 0 0) or <1 0 1 0 | 2 0>"
+                        : "(1 1 2; 0 0 0) or <1 1 0 0 | 2 0>"
+                    }
+                    autoComplete="off"
+                    autoCapitalize="off"
+                    spellCheck={false}
+                    maxLength={4000}
+                    className="h-11 w-88 max-w-full rounded-sm border border-edge bg-sheet px-3 font-mono text-base placeholder:text-quiet hover:border-ink aria-invalid:border-red"
+                  />
+                </span>
+              ) : (
+                <SymbolGrid
+                  key={way}
                   id={`${base}-quantity`}
+                  kind={way}
+                  cgOrder={cgOrder}
                   value={claim.quantity}
-                  onChange={(event) => put({ quantity: event.target.value })}
-                  aria-invalid={quantityFault || errors?.quantity ? true : undefined}
-                  aria-describedby={
-                    cx(
-                      quantityFault && `${base}-fault-quantity`,
-                      errors?.quantity && `${base}-error-quantity`,
-                    ) || undefined
-                  }
-                  placeholder={
-                    cgOrder === "j1m1j2m2"
-                      ? "(1 1 2; 0 0 0) or <1 0 1 0 | 2 0>"
-                      : "(1 1 2; 0 0 0) or <1 1 0 0 | 2 0>"
-                  }
-                  autoComplete="off"
-                  autoCapitalize="off"
-                  spellCheck={false}
-                  maxLength={4000}
-                  className="h-11 w-88 max-w-full rounded-sm border border-edge bg-sheet px-3 font-mono text-base placeholder:text-quiet hover:border-ink aria-invalid:border-red"
+                  onChange={(quantity) => put({ quantity })}
+                  errorAt={quantityFault ? quantityFault.at : null}
+                  describedBy={quantityFault ? `${base}-fault-quantity` : undefined}
+                  onOtherKind={(kind, quantity) => {
+                    setWay(kind);
+                    put({ quantity });
+                  }}
                 />
-              </span>
-            ) : (
-              <SymbolGrid
-                key={way}
-                id={`${base}-quantity`}
-                kind={way}
-                cgOrder={cgOrder}
-                value={claim.quantity}
-                onChange={(quantity) => put({ quantity })}
-                errorAt={quantityFault ? quantityFault.at : null}
-                describedBy={quantityFault ? `${base}-fault-quantity` : undefined}
-                onOtherKind={(kind, quantity) => {
-                  setWay(kind);
+              )}
+            </div>
+            <span
+              aria-hidden="true"
+              className={cx(
+                "text-2xl text-quiet",
+                way === "line" ? "mt-6 max-sm:hidden" : "-mt-9 max-sm:mt-0",
+              )}
+            >
+              =
+            </span>
+            <span className={cx("block min-w-0 font-ui", way !== "line" && "sm:-mt-15")}>
+              <label htmlFor={`${base}-claimed`} className="mb-1 block text-sm font-medium text-blue">
+                Claimed value
+              </label>
+              <input
+                id={`${base}-claimed`}
+                value={claim.claimed}
+                onChange={(event) => put({ claimed: event.target.value })}
+                aria-invalid={claimedFault || errors?.claimed ? true : undefined}
+                aria-describedby={
+                  cx(claimedFault && `${base}-fault-claimed`, errors?.claimed && `${base}-error-claimed`) ||
+                  undefined
+                }
+                placeholder="sqrt(2/15)"
+                autoComplete="off"
+                autoCapitalize="off"
+                spellCheck={false}
+                maxLength={4000}
+                className="h-11 w-56 max-w-full rounded-sm border border-blue bg-sheet px-3 font-mono text-base text-blue placeholder:text-quiet hover:bg-blue-wash aria-invalid:border-red aria-invalid:text-red"
+              />
+            </span>
+          </div>
+
+          {errors?.quantity ? (
+            <FieldMessage id={`${base}-error-quantity`}>{errors.quantity}</FieldMessage>
+          ) : null}
+          {errors?.claimed ? (
+            <FieldMessage id={`${base}-error-claimed`}>{errors.claimed}</FieldMessage>
+          ) : null}
+
+          <div className="mt-5 grid gap-3">
+            {quantityFault ? (
+              <FaultLine
+                id={`${base}-fault-quantity`}
+                text={claim.quantity}
+                error={quantityFault}
+                onTake={(quantity) => {
                   put({ quantity });
+                  if (way !== "line" && !cellsOf(way, quantity)) setWay(wayOf(quantity));
                 }}
               />
-            )}
+            ) : null}
+            {claimedFault ? (
+              <FaultLine
+                id={`${base}-fault-claimed`}
+                text={claim.claimed}
+                error={claimedFault}
+                onTake={(claimed) => put({ claimed })}
+              />
+            ) : null}
+            {answer?.html.quantity ? (
+              <figure className={cx("transition-opacity", stale && "opacity-45")}>
+                <figcaption className="font-ui text-xs text-quiet">as it is read</figcaption>
+                <div className="mt-1 overflow-x-auto py-1 text-xl">
+                  <MathHtml html={answer.html.quantity} />
+                  {answer.html.claimed ? (
+                    <>
+                      {" = "}
+                      <span className="text-blue">
+                        <MathHtml html={answer.html.claimed} />
+                      </span>
+                    </>
+                  ) : null}
+                </div>
+              </figure>
+            ) : null}
           </div>
-          <span
-            aria-hidden="true"
-            className={cx("text-2xl text-quiet", way === "line" ? "mt-6 max-sm:hidden" : "-mt-9 max-sm:mt-0")}
-          >
-            =
-          </span>
-          <span className={cx("block min-w-0 font-ui", way !== "line" && "sm:-mt-15")}>
-            <label htmlFor={`${base}-claimed`} className="mb-1 block text-sm font-medium text-blue">
-              Claimed value
-            </label>
-            <input
-              id={`${base}-claimed`}
-              value={claim.claimed}
-              onChange={(event) => put({ claimed: event.target.value })}
-              aria-invalid={claimedFault || errors?.claimed ? true : undefined}
-              aria-describedby={
-                cx(claimedFault && `${base}-fault-claimed`, errors?.claimed && `${base}-error-claimed`) ||
-                undefined
+        </div>
+
+        <div className="galley-notes min-w-0" aria-busy={stale}>
+          {failure ? (
+            <Notice
+              kind="warn"
+              title="Not checked"
+              live
+              action={
+                <Button size="small" onClick={retry}>
+                  Check again
+                </Button>
               }
-              placeholder="sqrt(2/15)"
-              autoComplete="off"
-              autoCapitalize="off"
-              spellCheck={false}
-              maxLength={4000}
-              className="h-11 w-56 max-w-full rounded-sm border border-blue bg-sheet px-3 font-mono text-base text-blue placeholder:text-quiet hover:bg-blue-wash aria-invalid:border-red aria-invalid:text-red"
+            >
+              {failure}
+            </Notice>
+          ) : finding && answer ? (
+            <FindingNote
+              finding={finding}
+              html={answer.html}
+              className={cx("transition-opacity", stale && "opacity-45")}
             />
-          </span>
-        </div>
-
-        {errors?.quantity ? (
-          <FieldMessage id={`${base}-error-quantity`}>{errors.quantity}</FieldMessage>
-        ) : null}
-        {errors?.claimed ? <FieldMessage id={`${base}-error-claimed`}>{errors.claimed}</FieldMessage> : null}
-
-        <div className="mt-5 grid gap-3">
-          {quantityFault ? (
-            <FaultLine
-              id={`${base}-fault-quantity`}
-              text={claim.quantity}
-              error={quantityFault}
-              onTake={(quantity) => {
-                put({ quantity });
-                if (way !== "line" && !cellsOf(way, quantity)) setWay(wayOf(quantity));
-              }}
-            />
-          ) : null}
-          {claimedFault ? (
-            <FaultLine
-              id={`${base}-fault-claimed`}
-              text={claim.claimed}
-              error={claimedFault}
-              onTake={(claimed) => put({ claimed })}
-            />
-          ) : null}
-          {answer?.html.quantity ? (
-            <figure className={cx("transition-opacity", stale && "opacity-45")}>
-              <figcaption className="font-ui text-xs text-quiet">as it is read</figcaption>
-              <div className="mt-1 overflow-x-auto py-1 text-xl">
-                <MathHtml html={answer.html.quantity} />
-                {answer.html.claimed ? (
-                  <>
-                    {" = "}
-                    <span className="text-blue">
-                      <MathHtml html={answer.html.claimed} />
-                    </span>
-                  </>
-                ) : null}
-              </div>
-            </figure>
-          ) : null}
-        </div>
-
-        {answer?.evidence && !stale ? (
-          <Disclosure summary="Evidence, to be redone by hand" className="mt-5">
-            <EvidenceSheet evidence={answer.evidence} html={answer.html.evidence} />
-          </Disclosure>
-        ) : null}
-      </div>
-
-      <div className="galley-notes min-w-0" aria-busy={stale}>
-        {failure ? (
-          <Notice
-            kind="warn"
-            title="Not checked"
-            live
-            action={
-              <Button size="small" onClick={retry}>
-                Check again
-              </Button>
-            }
-          >
-            {failure}
-          </Notice>
-        ) : finding && answer ? (
-          <FindingNote
-            finding={finding}
-            html={answer.html}
-            className={cx("transition-opacity", stale && "opacity-45")}
-          />
-        ) : (
-          <p className="text-base text-quiet italic">
-            {stale
-              ? "Reading…"
-              : claim.quantity.trim() === ""
-                ? "Fill in the symbol as it is printed."
-                : "Now write the value that the key claims for it."}
+          ) : (
+            <p className="text-base text-quiet italic">
+              {stale
+                ? "Reading…"
+                : claim.quantity.trim() === ""
+                  ? "Fill in the symbol as it is printed."
+                  : "Now write the value that the key claims for it."}
+            </p>
+          )}
+          <p role="status" className="sr-only">
+            {fresh ? `Verdict: ${VERDICTS[finding.verdict].word}. ${finding.reason}` : ""}
           </p>
-        )}
-        <p role="status" className="sr-only">
-          {fresh ? `Verdict: ${VERDICTS[finding.verdict].word}. ${finding.reason}` : ""}
-        </p>
+        </div>
       </div>
+      {answer?.evidence && !stale ? (
+        <Disclosure summary="Evidence, to be redone by hand" className="mt-2">
+          <EvidenceSheet evidence={answer.evidence} html={answer.html.evidence} />
+        </Disclosure>
+      ) : null}
     </div>
   );
 }

@@ -13,7 +13,7 @@ export function EvidenceSheet({ evidence, html }: { evidence: Evidence; html: Ev
   return (
     <div className="grid gap-6 font-ui text-sm">
       <Part title="Selection rules">
-        <ul className="grid gap-1.5">
+        <ul className="grid gap-x-8 gap-y-1.5 sm:grid-cols-2 lg:grid-cols-3">
           {evidence.rules.map((rule) => (
             <li key={rule.says} className={rule.holds ? "flex gap-2" : "flex gap-2 text-red"}>
               <Mark

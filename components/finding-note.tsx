@@ -57,7 +57,7 @@ export function FindingNote({
               </span>
               <p className="italic">{slip.says}</p>
               {slip.formula ? (
-                <p className="mt-1 overflow-x-auto text-base text-ink">
+                <p className="mt-1.5 overflow-x-auto py-1 text-sm text-ink">
                   <MathHtml html={slip.formula} />
                 </p>
               ) : null}

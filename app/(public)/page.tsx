@@ -18,7 +18,7 @@ export default async function FrontPage() {
   return (
     <div className="mx-auto max-w-page px-5 pb-20 sm:px-8">
       <section className="grid items-end gap-x-12 gap-y-6 pt-9 pb-9 lg:grid-cols-[minmax(0,1fr)_22rem]">
-        <h1 className="max-w-[25ch] text-3xl sm:text-4xl">
+        <h1 className="max-w-[30ch] text-3xl sm:text-4xl">
           Every coupling coefficient in your answer key, recomputed before it is printed.
         </h1>
         <div className="border-l-3 border-double border-red pl-5">
