@@ -38,6 +38,8 @@ export type GalleyProblem = {
   version: number;
   /** Whether the problem began on an earlier page. */
   continued: boolean;
+  /** Whether it goes on over the next page. */
+  continues: boolean;
   first: boolean;
   last: boolean;
   total: number;
@@ -149,6 +151,7 @@ export async function getGalley(
         version,
         statement: statements.get(problemId) ?? "",
         continued: from > 0,
+        continues: to < all.length,
         first: at === 0,
         last: at === problems.length - 1,
         total: all.length,

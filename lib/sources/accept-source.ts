@@ -74,7 +74,7 @@ export async function acceptSource(input: AcceptSource, user: SessionUser): Prom
     );
     const plan = planRows(rows, standing, source.chapterId);
     if (plan.fingerprint !== input.fingerprint) throw await chapterChanged(input, plan, transaction);
-    const chosen = choose(plan, input.rows);
+    const chosen = choose(plan, input.rows, file.errors.length);
     await enter(chosen, source, user, transaction);
     const replaced = chosen.filter(({ effect }) => effect === "replaces").length;
     const result: Accepted = {
@@ -124,11 +124,12 @@ const sheetChanged = () =>
     "The conventions sheet was changed since you opened this page, so the rows may be read differently. Look at the preview again.",
   );
 
-function choose(plan: Plan, which: AcceptSource["rows"]): PlannedRow[] {
-  if (which === "all" && plan.counts.refused > 0)
+function choose(plan: Plan, which: AcceptSource["rows"], broken: number): PlannedRow[] {
+  const out = plan.counts.refused + broken;
+  if (which === "all" && out > 0)
     throw new AppError(
       "invalid",
-      `${plan.counts.refused} of the rows cannot enter; accept the good rows only, or mend the file.`,
+      `${out} of the rows cannot enter; accept the good rows only, or mend the file.`,
     );
   const chosen = plan.rows.filter((row) => enters(row) && (row.readable || which === "all"));
   if (chosen.length === 0)
@@ -218,22 +219,20 @@ async function replace(
     );
     await ClaimVersion.bulkCreate(versions, { transaction });
     for (const [i, { claimId, number, quantity, claimed, note, page }] of versions.entries())
-      await claims
-        .get(claimId)
-        ?.update(
-          {
-            current: number,
-            quantity,
-            claimed,
-            note,
-            page,
-            claimantId: by.authorId,
-            orbitKey: some[i]?.orbitKey ?? null,
-            verdict: null,
-            findingId: null,
-          },
-          { transaction },
-        );
+      await claims.get(claimId)?.update(
+        {
+          current: number,
+          quantity,
+          claimed,
+          note,
+          page,
+          claimantId: by.authorId,
+          orbitKey: some[i]?.orbitKey ?? null,
+          verdict: null,
+          findingId: null,
+        },
+        { transaction },
+      );
     await supersedeFlags(ids, by.authorId, transaction);
   }
 }

@@ -1,4 +1,5 @@
 import type { SessionUser } from "@/lib/auth/user";
+import { readClaim, type ClaimReading } from "@/lib/claims/reading";
 import { notFound } from "@/lib/errors";
 import { conventionsAt } from "@/lib/flags/conventions-at";
 import type { Conventions } from "@/lib/verify/conventions";
@@ -15,6 +16,9 @@ export const ROWS_PER_PAGE = 50;
 
 export const ROW_VIEWS = ["all", "changes", "trouble"] as const;
 export type RowView = (typeof ROW_VIEWS)[number];
+
+/** A row beside the claim that it concerns, which is read as well. */
+export type SourceRow = PlannedRow & { standingReading: ClaimReading | null };
 
 export type SourceView = {
   work: { id: string; title: string };
@@ -40,10 +44,11 @@ export type SourceView = {
   errors: { line: number; column: number; says: string }[];
   differs: Difference[];
   choice: ConventionsChoice | null;
-  counts: Plan["counts"] & { rows: number };
+  /** rows that could be taken from the file, what accepting would do with them, and lines that gave no row */
+  counts: Plan["counts"] & { rows: number; broken: number };
   fingerprint: string;
   view: RowView;
-  rows: PlannedRow[];
+  rows: SourceRow[];
   matching: number;
   page: number;
   pages: number;
@@ -109,10 +114,13 @@ export async function getSource(
     errors: file.errors,
     differs,
     choice: differs.length > 0 ? (ask.choice ?? null) : "sheet",
-    counts: { ...plan.counts, rows: plan.rows.length },
+    counts: { ...plan.counts, rows: plan.rows.length, broken: file.errors.length },
     fingerprint: plan.fingerprint,
     view,
-    rows: matching.slice((page - 1) * ROWS_PER_PAGE, page * ROWS_PER_PAGE),
+    rows: matching.slice((page - 1) * ROWS_PER_PAGE, page * ROWS_PER_PAGE).map((row) => ({
+      ...row,
+      standingReading: row.standing && readClaim(row.standing.quantity, row.standing.claimed, conventions),
+    })),
     matching: matching.length,
     page,
     pages,

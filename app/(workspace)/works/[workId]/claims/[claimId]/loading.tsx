@@ -1,0 +1,10 @@
+import { PageBody } from "@/components/ui/page";
+import { SkeletonPage } from "@/components/ui/skeleton";
+
+export default function Loading() {
+  return (
+    <PageBody>
+      <SkeletonPage rows={7} label="The claim is on its way" />
+    </PageBody>
+  );
+}
