@@ -4,48 +4,80 @@ import { KEY_FILE_LIMITS, UnusableFile } from "./key-file";
 /** Where each value of a JSON text begins, by its JSON Pointer. */
 export type JsonPlaces = Map<string, number>;
 
+type Expects = "value" | "value or ]" | "key" | "key or }" | "colon" | "comma" | "end";
 type Frame = { kind: "object" | "array"; keys: Set<string>; key: string; index: number; pointer: string };
 
 /**
- * Walks a JSON text once, without recursion, before it is handed to JSON.parse: refuses it past the depth limit, with a
- * key twice in one object, or with a key that would touch a prototype, and notes where each value stands. What is not
- * well-formed in other ways is left to JSON.parse.
- * @throws UnusableFile at the place of the fault
+ * Walks a JSON text once, without recursion, before it is handed to JSON.parse. JSON.parse takes the last of two equal
+ * keys in silence, does not always say where it stopped, and recurses as deep as the text does.
+ * @throws UnusableFile at the place where the text is not well-formed, nests past the limit, repeats a key in one
+ *   object, or has a key that would touch a prototype
  */
 export function scanJson(text: string): JsonPlaces {
   const places: JsonPlaces = new Map();
   const stack: Frame[] = [];
+  let expects = "value" as Expects;
+
   const refuse = (at: number, says: string, pointer?: string): never => {
     throw new UnusableFile({ ...placeOf(text, at), says, ...(pointer === undefined ? {} : { pointer }) });
+  };
+  const unexpected = (at: number): never => {
+    const wanted = {
+      value: "a value",
+      "value or ]": "a value or ]",
+      key: "a key in quotation marks",
+      "key or }": "a key in quotation marks or }",
+      colon: "a colon",
+      comma: stack[stack.length - 1]?.kind === "array" ? "a comma or ]" : "a comma or }",
+      end: "the end of the file",
+    }[expects];
+    const found =
+      at >= text.length ? "the end of the file" : `“${String.fromCodePoint(text.codePointAt(at) ?? 0)}”`;
+    return refuse(at, `This is not well-formed JSON: ${wanted} is expected here, but there is ${found}.`);
   };
   const here = () => {
     const frame = stack[stack.length - 1];
     if (!frame) return "";
     return `${frame.pointer}/${frame.kind === "array" ? frame.index : escapePointer(frame.key)}`;
   };
-  let expectKey = false;
+  const takesValue = () => expects === "value" || expects === "value or ]";
+  const afterValue = () => {
+    expects = stack.length === 0 ? "end" : "comma";
+  };
+
   for (let at = 0; at < text.length;) {
     const c = text[at] as string;
     const frame = stack[stack.length - 1];
-    if (c === '"') {
+    if (c === " " || c === "\n" || c === "\r" || c === "\t") at += 1;
+    else if (c === '"') {
       const end = endOfString(text, at);
-      if (end < 0) refuse(at, "A string is opened here and never closed.");
-      if (frame?.kind === "object" && expectKey) {
-        const key = decodeString(text.slice(at, end));
+      if (end < 0) refuse(at, "A string is opened here and not closed on its line.");
+      if (frame?.kind === "object" && (expects === "key" || expects === "key or }")) {
+        const key =
+          decodeString(text.slice(at, end)) ??
+          refuse(at, "This string has an escape that JSON does not know.");
         const pointer = `${frame.pointer}/${escapePointer(key)}`;
         if (frame.keys.has(key))
           refuse(at, `The key “${key.slice(0, 40)}” stands twice in one object.`, pointer);
         if (key === "__proto__") refuse(at, "The key “__proto__” is not allowed.", pointer);
         frame.keys.add(key);
         frame.key = key;
-        expectKey = false;
-      } else places.set(here(), at);
+        expects = "colon";
+      } else {
+        if (!takesValue()) unexpected(at);
+        if (decodeString(text.slice(at, end)) === null) {
+          refuse(at, "This string has an escape or a control character that JSON does not allow.", here());
+        }
+        places.set(here(), at);
+        afterValue();
+      }
       at = end;
     } else if (c === "{" || c === "[") {
-      places.set(here(), at);
+      if (!takesValue()) unexpected(at);
       if (stack.length >= KEY_FILE_LIMITS.depth) {
         refuse(at, `The file is nested more than ${KEY_FILE_LIMITS.depth} deep; a key is three deep.`);
       }
+      places.set(here(), at);
       stack.push({
         kind: c === "{" ? "object" : "array",
         keys: new Set(),
@@ -53,25 +85,40 @@ export function scanJson(text: string): JsonPlaces {
         index: 0,
         pointer: here(),
       });
-      expectKey = c === "{";
+      expects = c === "{" ? "key or }" : "value or ]";
       at += 1;
     } else if (c === "}" || c === "]") {
+      const kind = c === "}" ? "object" : "array";
+      const closes = expects === "comma" || expects === (kind === "object" ? "key or }" : "value or ]");
+      if (frame?.kind !== kind || !closes) unexpected(at);
       stack.pop();
-      expectKey = false;
+      afterValue();
       at += 1;
     } else if (c === ",") {
-      if (frame?.kind === "array") frame.index += 1;
-      expectKey = frame?.kind === "object";
+      if (!frame || expects !== "comma") unexpected(at);
+      else {
+        frame.index += 1;
+        expects = frame.kind === "object" ? "key" : "value";
+      }
       at += 1;
-    } else if (/[\s:]/.test(c)) at += 1;
-    else {
+    } else if (c === ":") {
+      if (expects !== "colon") unexpected(at);
+      expects = "value";
+      at += 1;
+    } else {
+      LITERAL.lastIndex = at;
+      const literal = LITERAL.exec(text)?.[0];
+      if (!takesValue() || literal === undefined) return unexpected(at);
       places.set(here(), at);
-      at += 1;
-      while (at < text.length && !/[\s,:{}[\]"]/.test(text[at] as string)) at += 1;
+      afterValue();
+      at += literal.length;
     }
   }
+  if (expects !== "end") unexpected(text.length);
   return places;
 }
+
+const LITERAL = /(?:true|false|null|-?(?:0|[1-9]\d*)(?:\.\d+)?(?:[eE][+-]?\d+)?)(?![\w.+-])/y;
 
 function endOfString(text: string, start: number): number {
   for (let at = start + 1; at < text.length; at++) {
@@ -82,26 +129,15 @@ function endOfString(text: string, start: number): number {
   return -1;
 }
 
-function decodeString(literal: string): string {
+/** The text of a string literal; null when it is not well-formed. */
+function decodeString(literal: string): string | null {
   try {
     return String(JSON.parse(literal));
   } catch {
-    return literal.slice(1, -1);
+    return null;
   }
 }
 
 export function escapePointer(key: string): string {
   return key.replaceAll("~", "~0").replaceAll("/", "~1");
-}
-
-/** JSON.parse's complaint as a place in the text. */
-export function jsonSyntaxError(text: string, error: unknown): UnusableFile {
-  const message = error instanceof Error ? error.message : "";
-  const position = /position (\d+)/.exec(message)?.[1];
-  const offset = position === undefined ? text.length : Number(position);
-  const found = offset >= text.length ? "the end of the file" : `“${text[offset] as string}”`;
-  return new UnusableFile({
-    ...placeOf(text, Math.min(offset, text.length)),
-    says: `This is not well-formed JSON: ${found} is not expected here.`,
-  });
 }

@@ -1,6 +1,6 @@
 import type { Conventions } from "@/lib/verify/conventions";
 import { placeOf } from "./decode";
-import { escapePointer, jsonSyntaxError, scanJson, type JsonPlaces } from "./json-scan";
+import { escapePointer, scanJson, type JsonPlaces } from "./json-scan";
 import { KEY_FILE_LIMITS, type KeyFileError, type KeyRow } from "./key-file";
 import { keySchema, type KeyInput } from "./key-schema";
 
@@ -12,13 +12,7 @@ export type JsonKey = { key: KeyInput | null; errors: KeyFileError[]; places: Js
  */
 export function parseKey(text: string, mostClaims: number): JsonKey {
   const places = scanJson(text);
-  let value: unknown;
-  try {
-    value = JSON.parse(text);
-  } catch (error) {
-    throw jsonSyntaxError(text, error);
-  }
-  const parsed = keySchema(mostClaims).safeParse(value);
+  const parsed = keySchema(mostClaims).safeParse(JSON.parse(text));
   const errors = parsed.success
     ? []
     : parsed.error.issues.map((issue) => {
