@@ -22,7 +22,7 @@ export const SIX_J_TRIADS = [
 export function sixJArray(entries: SixJ): number[] | null {
   const [a, b, c, d, e, f] = entries;
   if (entries.some((j) => j < 0)) return null;
-  const alphas = SIX_J_TRIADS.map((t) => t.reduce((sum, n) => sum + (entries[n] as number), 0));
+  const alphas = SIX_J_TRIADS.map((t) => t.reduce<number>((sum, n) => sum + (entries[n] as number), 0));
   if (alphas.some((n) => n % 2 !== 0)) return null;
   const betas = [a + b + d + e, b + c + e + f, c + a + f + d];
   const array = alphas.flatMap((alpha) => betas.map((beta) => (beta - alpha) / 2));
@@ -45,7 +45,7 @@ export type SixJParts = {
  */
 export function sixJParts(entries: SixJ): SixJParts {
   const [a, b, c, d, e, f] = entries;
-  const alphas = SIX_J_TRIADS.map((t) => t.reduce((sum, n) => sum + (entries[n] as number), 0) / 2);
+  const alphas = SIX_J_TRIADS.map((t) => t.reduce<number>((sum, n) => sum + (entries[n] as number), 0) / 2);
   const [a1, a2, a3, a4] = alphas as [number, number, number, number];
   const [b1, b2, b3] = [(a + b + d + e) / 2, (b + c + e + f) / 2, (c + a + f + d) / 2];
   const from = Math.max(a1, a2, a3, a4);

@@ -1,3 +1,4 @@
+import { accidentalReason } from "@/lib/symbols/accidental";
 import { showHalf, type Twice } from "@/lib/symbols/half";
 import type { Kind, Quantity, Rule, VanishingReason } from "@/lib/symbols/kinds";
 import { quantityText } from "@/lib/symbols/quantity-print";
@@ -11,9 +12,6 @@ import {
   type Element,
 } from "@/lib/symbols/regge";
 import { racahParts, reggeSquare, type ThreeJ } from "@/lib/symbols/three-j";
-
-/** Up to so many terms of a sum are written out in a sentence. */
-const TERMS_IN_A_SENTENCE = 8;
 
 const NAMES: Record<Kind, { j: readonly string[]; m: readonly string[] }> = {
   "3j": { j: ["j1", "j2", "j3"], m: ["m1", "m2", "m3"] },
@@ -127,7 +125,7 @@ export function whyZero(q: Quantity): VanishingReason[] {
   if (parity) reasons.push(parity);
   if (reasons.length > 0) return reasons;
   const parts = racahParts(reggeSquare(entries) as number[]);
-  return parts.total === 0n ? [{ rule: "accidental", says: accidental(parts.terms) }] : [];
+  return parts.total === 0n ? [accidentalReason("Racah's sum", parts.terms)] : [];
 }
 
 function parityReason(q: Quantity, entries: ThreeJ): VanishingReason | null {
@@ -157,15 +155,6 @@ const BY_SIMPLICITY: readonly Element[] = [...ELEMENTS].sort((a, b) => plainness
 
 function plainness(e: Element): number {
   return e.name === "projections reversed" ? 0 : (e.classical ? 1 : 1_000) + e.name.length;
-}
-
-function accidental(terms: readonly bigint[]): string {
-  const shown = terms.slice(0, TERMS_IN_A_SENTENCE).map((t, n) => {
-    const size = (t < 0n ? -t : t).toString();
-    return n === 0 ? (t < 0n ? `−${size}` : size) : `${t < 0n ? "−" : "+"} ${size}`;
-  });
-  const rest = terms.length > TERMS_IN_A_SENTENCE ? ` + … (${terms.length} terms)` : "";
-  return `No rule and no symmetry forbids it; the terms of Racah's sum happen to cancel: ${shown.join(" ")}${rest} = 0.`;
 }
 
 function show(doubled: number): string {
