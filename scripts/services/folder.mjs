@@ -9,10 +9,10 @@ import { Fault } from "./report.mjs";
 /**
  * The git-ignored folder that holds everything a start keeps: servers' data, secrets, chosen ports, logs, mail.
  * @param {string} root the clone
- * @param {string} name ".local" for the product, ".test" for the tests
+ * @param {string} name ".local" for the product, ".test" for the tests, or any full path
  */
 export function openFolder(root, name) {
-  const at = path.join(root, name);
+  const at = path.resolve(root, name);
   mkdirSync(path.join(at, "logs"), { recursive: true, mode: 0o700 });
   chmodSync(at, 0o700);
   return {

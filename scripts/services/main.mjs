@@ -19,7 +19,8 @@ let ending = null;
 
 /** Starts the whole product and keeps it running until a signal comes. */
 export async function main({ dev, showLogs }) {
-  const folder = openFolder(ROOT, ".local");
+  loadDotenv(ROOT);
+  const folder = openFolder(ROOT, process.env.LOCAL_FOLDER || ".local");
   const end = (code) => (ending ??= shutDown(folder, code));
   for (const signal of ["SIGINT", "SIGTERM", "SIGHUP"])
     process.on(signal, () => {
@@ -45,7 +46,6 @@ export async function main({ dev, showLogs }) {
 
 async function startAll(folder, { dev, showLogs, fail }) {
   const since = performance.now();
-  loadDotenv(ROOT);
   const port = portOf(process.env);
   const demo = isDemo(process.env);
   const recovered = await lock(folder, "Surdmark");
@@ -90,9 +90,6 @@ async function startAll(folder, { dev, showLogs, fail }) {
     runScript(ROOT, name, args, { env: { ...env, ...extra }, log });
 
   if (isConfigured(process.env)) await step("Settings", () => checkSettings(runTool, folder.log("settings")));
-  if (!dev)
-    await step("Build", () => requireBuild(ROOT, ".next", { ...env, SKIP_TYPES: "1" }, folder.log("build")));
-
   const changed = () => remember(folder, env.APP_URL, keepers);
   const keep = (name, child, begin, log) => {
     keepers.push(supervise(child, begin, { name, log, changed, giveUp: fail }));
@@ -130,6 +127,9 @@ async function startAll(folder, { dev, showLogs, fail }) {
       if (aside) return `${what}; damaged Redis data put aside`;
       return `${isNew ? "created, " : ""}${what}`;
     });
+
+  if (!dev)
+    await step("Build", () => requireBuild(ROOT, ".next", { ...env, SKIP_TYPES: "1" }, folder.log("build")));
 
   if (existsSync(script("migrate.ts")))
     await step("Tables", async () => {
