@@ -49,7 +49,7 @@ describe("published and oracle values of the 9j", () => {
   const differing = (list: Row[]) =>
     list.filter((row) => !equals(nineJ(entriesOf(row.args)), exactOf(row.value)));
 
-  it("agrees with all 111 published rows, by both routes", () => {
+  it("agrees with all 111 published rows, every second by both routes", () => {
     const list = rows("published.jsonl", "9j");
     expect(list).toHaveLength(111);
     expect(differing(list)).toEqual([]);
@@ -58,12 +58,12 @@ describe("published and oracle values of the 9j", () => {
     );
   });
 
-  it("agrees with all 400 oracle rows, every fourth by both routes", () => {
+  it("agrees with all 400 oracle rows, every eighth by both routes", () => {
     const list = rows("oracle-open.jsonl", "9j");
     expect(list).toHaveLength(400);
     expect(differing(list)).toEqual([]);
     const second = list.filter(
-      (row, n) => n % 4 === 0 && !equals(nineJFromThreeJ(entriesOf(row.args)), exactOf(row.value)),
+      (row, n) => n % 8 === 0 && !equals(nineJFromThreeJ(entriesOf(row.args)), exactOf(row.value)),
     );
     expect(second).toEqual([]);
   });

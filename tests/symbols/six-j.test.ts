@@ -201,10 +201,11 @@ describe("symmetries of the 6j", () => {
   it("leave the value, and the key, of every image, j ≤ 30", () => {
     fc.assert(
       fc.property(allowedSixJ(30), (s) => {
-        expect(sixJVariants(s).filter((v) => !v.agrees)).toEqual([]);
+        const list = sixJVariants(s);
+        expect(list.filter((v) => !v.agrees)).toEqual([]);
         const key = sixJKey(s);
         expect(key.length).toBeLessThanOrEqual(191);
-        for (const v of sixJVariants(s)) expect(sixJKey(v.entries)).toBe(key);
+        for (const v of list) expect(sixJKey(v.entries)).toBe(key);
         same(sixJ(sixJOfKey(key)), sixJ(s), key);
         expect(sixJKey(sixJOfKey(key))).toBe(key);
       }),
@@ -296,6 +297,18 @@ describe("why a 6j is 0", () => {
     expect(isZero(sixJ(s))).toBe(rules.length > 0);
     expect(isZero(sixJFromThreeJ(s))).toBe(rules.length > 0);
     expect(sixJRules(s).some((r) => !r.holds)).toBe(sixJArray(s) === null);
+  });
+
+  it("has a reason exactly when the value is 0, stretched triads and the oracle's zeros included", () => {
+    for (const row of [...rows("oracle-open.jsonl", "6j"), ...rows("published.jsonl", "6j")]) {
+      expect(whyZeroSixJ(entriesOf(row.args)).length > 0, row.args.join(" ")).toBe(row.value.sign === 0);
+    }
+    fc.assert(
+      fc.property(allowedSixJ(8), (s) => {
+        expect(whyZeroSixJ(s).length > 0).toBe(isZero(sixJ(s)));
+        expect(sixJRules(s).every((r) => r.holds)).toBe(true);
+      }),
+    );
   });
 
   it("speaks Racah's letters for W", () => {
