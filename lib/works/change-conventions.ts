@@ -4,12 +4,12 @@ import { gate } from "@/lib/auth/gate";
 import type { SessionUser } from "@/lib/auth/user";
 import { AppError } from "@/lib/errors";
 import { transact } from "@/lib/transact";
-import { Claim, ConventionsSheet, Work } from "@/models";
+import { Claim, ConventionsSheet, Run, Work } from "@/models";
 import { readConventions, type ConventionsChange } from "./schema";
 
 /**
  * Writes the next version of the conventions sheet. Verdicts were reached under the old one, so every claim of the
- * work becomes unchecked; nothing else about a claim changes, and findings of earlier runs stay.
+ * work becomes unchecked, and runs under way are cancelled; nothing else about a claim changes, and findings stay.
  * @returns the version now in force and how many claims lost their verdict; a sheet that says the same changes nothing
  * @throws AppError not_found; forbidden; conflict when somebody else has changed the sheet meanwhile
  */
@@ -45,6 +45,11 @@ export async function changeConventions(
       { transaction },
     );
     await work.update({ conventionsVersion: version }, { transaction });
+    // First the runs, as their workers lock them: none can write a verdict of the old sheet after this.
+    await Run.update(
+      { state: "cancelled", endedAt: new Date() },
+      { where: { workId, state: { [Op.in]: ["queued", "running"] } }, transaction },
+    );
     const [due] = await Claim.update(
       { verdict: null, findingId: null },
       { where: { workId, verdict: { [Op.not]: null } }, transaction },

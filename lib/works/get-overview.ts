@@ -4,6 +4,7 @@ import { can } from "@/lib/auth/permissions";
 import type { SessionUser } from "@/lib/auth/user";
 import { Chapter, Claim, FrozenKey, Membership, Run } from "@/models";
 import type { Verdict } from "@/models/finding";
+import type { RunState } from "@/models/run";
 import { addCounts, countOpenFlags, countVerdicts, type VerdictCounts } from "./counts";
 import { nextStep, type NextStep } from "./next-step";
 
@@ -19,7 +20,7 @@ export type ChapterView = {
   openFlags: number;
   /** null when there are too many claims for a strip */
   cells: { id: string; ref: string; verdict: Verdict | null }[] | null;
-  lastRun: { id: string; state: Run["state"]; at: string } | null;
+  lastRun: { id: string; state: RunState; at: string } | null;
 };
 
 export type Overview = {

@@ -1,0 +1,10 @@
+import { PageBody } from "@/components/ui/page";
+import { SkeletonPage } from "@/components/ui/skeleton";
+
+export default function Loading() {
+  return (
+    <PageBody>
+      <SkeletonPage rows={5} label="Your desk is on its way" />
+    </PageBody>
+  );
+}
