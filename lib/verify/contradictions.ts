@@ -41,8 +41,9 @@ export function contradictions(entries: readonly OrbitEntry[]): Map<string, Clas
     if (members.length < 2 || members.every((each) => each.impliedCanonical === members[0]?.impliedCanonical))
       continue;
     const byValue = groups(members);
+    const sample = sampleOf(byValue);
     for (const [value, group] of byValue) {
-      const others = othersThan(value, byValue);
+      const others = sample.filter((each) => each.impliedCanonical !== value).slice(0, MOST_LISTED);
       for (const entry of group) clashes.set(entry.id, clashOf(entry, others, members.length - group.length));
     }
   }
@@ -60,16 +61,13 @@ function groups(members: readonly OrbitEntry[]): Map<string, OrbitEntry[]> {
   return byValue;
 }
 
-/** The first claims that say something else than `value`, the right ones before all others. */
-function othersThan(value: string | null, byValue: ReadonlyMap<string, readonly OrbitEntry[]>): OrbitEntry[] {
-  const others: OrbitEntry[] = [];
-  const right: OrbitEntry[] = [];
-  for (const [each, group] of byValue) {
-    if (each === value) continue;
-    if (group.some((entry) => isConfirmed(entry.verdict))) right.push(...group.slice(0, MOST_LISTED));
-    else if (others.length < MOST_LISTED) others.push(...group.slice(0, MOST_LISTED - others.length));
-  }
-  return [...right.slice(0, MOST_LISTED), ...others];
+/** A few claims of each value, the right ones before all others: enough to name those that say something else. */
+function sampleOf(byValue: ReadonlyMap<string, readonly OrbitEntry[]>): OrbitEntry[] {
+  const isRight = (group: readonly OrbitEntry[]) => group.some((entry) => isConfirmed(entry.verdict));
+  const lists = [...byValue.values()];
+  const right = lists.filter(isRight).slice(0, MOST_LISTED);
+  const others = lists.filter((group) => !isRight(group)).slice(0, MOST_LISTED + 1);
+  return [...right, ...others].flatMap((group) => group.slice(0, MOST_LISTED));
 }
 
 function clashOf(entry: OrbitEntry, others: readonly OrbitEntry[], count: number): Clash {

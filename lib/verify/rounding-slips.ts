@@ -15,6 +15,8 @@ export function judgeDecimal(claimed: Decimal, truth: Exact): DecimalJudgement {
   if (!isReal(truth)) return "different";
   const difference = absolute(subtract(claimed.exact, truth));
   if (difference.terms.length === 0) return "equal";
+  // Zeros alone claim that the value vanishes; they are no rounding of a value that does not.
+  if (claimed.digits === 0) return "different";
   const unit = rational(1n, 10n ** BigInt(claimed.places));
   const half = rational(1n, 2n * 10n ** BigInt(claimed.places));
   if (compare(difference, half) <= 0) return "rounded";
