@@ -44,7 +44,9 @@ export async function restoreClaim(input: ClaimAt, user: SessionUser): Promise<{
     if (claim.withdrawnAt === null) return { version: claim.version };
     if (claim.version !== input.version) throw await staleClaim(claim, transaction);
     await nextVersion(claim, claim, { authorId: user.id, origin: "restored" }, transaction);
-    await claim.update({ withdrawnAt: null }, { transaction });
+    // The version has set its own columns; update() would write only the one it is given.
+    claim.set({ withdrawnAt: null });
+    await claim.save({ transaction });
     await audit(transaction, {
       workId: claim.workId,
       actorId: user.id,

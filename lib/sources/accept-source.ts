@@ -1,5 +1,5 @@
 import { randomUUID } from "node:crypto";
-import { fn, col, Op, type Transaction } from "sequelize";
+import { fn, col, Op, type CreationAttributes, type Transaction } from "sequelize";
 import { audit } from "@/lib/audit";
 import { gate } from "@/lib/auth/gate";
 import type { SessionUser } from "@/lib/auth/user";
@@ -190,50 +190,62 @@ async function enter(
   );
 }
 
+const REPLACED = [
+  "current",
+  "quantity",
+  "claimed",
+  "note",
+  "page",
+  "claimantId",
+  "orbitKey",
+  "verdict",
+  "findingId",
+  "version",
+  "updatedAt",
+] as const;
+
+/** New versions of claims that stand already; the caller holds their locks. Written in bulk, as the file may be long. */
 async function replace(
   rows: readonly PlannedRow[],
   by: { workId: string; authorId: string; origin: "source"; sourceId: string },
   transaction: Transaction,
 ): Promise<void> {
   for (const some of pieces(rows)) {
-    const ids = some.flatMap(({ standing }) => standing?.id ?? []);
-    const claims = new Map(
-      (await Claim.findAll({ where: { id: ids }, transaction, lock: transaction.LOCK.UPDATE })).map(
-        (claim) => [claim.id, claim],
-      ),
+    const rowOf = new Map(some.flatMap((row) => (row.standing ? [[row.standing.id, row] as const] : [])));
+    const claims = await Claim.findAll({
+      where: { id: [...rowOf.keys()] },
+      lock: transaction.LOCK.UPDATE,
+      transaction,
+    });
+    const next = claims.flatMap((claim) => {
+      const row = rowOf.get(claim.id);
+      if (!row) return [];
+      const text = {
+        quantity: row.quantity,
+        claimed: row.claimed,
+        note: row.note ?? claim.note,
+        page: row.page ?? claim.page,
+      };
+      return [{ claim, text, number: claim.current + 1, orbitKey: row.orbitKey }];
+    });
+    await ClaimVersion.bulkCreate(
+      next.map(({ claim, text, number }) => ({ ...by, ...text, claimId: claim.id, number })),
+      { transaction },
     );
-    const versions = some.flatMap(({ standing, quantity, claimed, note, page }) =>
-      standing
-        ? [
-            {
-              ...by,
-              claimId: standing.id,
-              number: standing.current + 1,
-              quantity,
-              claimed,
-              note: note ?? standing.note,
-              page: page ?? standing.page,
-            },
-          ]
-        : [],
+    await Claim.bulkCreate(
+      next.map(({ claim, text, number, orbitKey }) => ({
+        ...(claim.get() as CreationAttributes<Claim>),
+        ...text,
+        current: number,
+        claimantId: by.authorId,
+        orbitKey,
+        verdict: null,
+        findingId: null,
+        version: claim.version + 1,
+      })),
+      { updateOnDuplicate: [...REPLACED], transaction },
     );
-    await ClaimVersion.bulkCreate(versions, { transaction });
-    for (const [i, { claimId, number, quantity, claimed, note, page }] of versions.entries())
-      await claims.get(claimId)?.update(
-        {
-          current: number,
-          quantity,
-          claimed,
-          note,
-          page,
-          claimantId: by.authorId,
-          orbitKey: some[i]?.orbitKey ?? null,
-          verdict: null,
-          findingId: null,
-        },
-        { transaction },
-      );
-    await supersedeFlags(ids, by.authorId, transaction);
+    await supersedeFlags([...rowOf.keys()], by.authorId, transaction);
   }
 }
 
