@@ -56,7 +56,15 @@ export function ClaimCheck({
   const cgOrder = conventions?.cgOrder ?? "j1m1j2m2";
   const [claim, setClaim] = useState(initial);
   const [way, setWay] = useState<Way>(() => wayOf(initial.quantity));
-  const { answer, stale, failure, retry } = useCheck(claim, conventions, initialAnswer, onReading);
+  const { answer, stale, failure, retry } = useCheck(
+    claim,
+    // A symbol with empty cells is not asked about: it is being typed.
+    claim.claimed.trim() !== "" &&
+      (way === "line" ? claim.quantity.trim() !== "" : cellsOf(way, claim.quantity) !== null),
+    conventions,
+    initialAnswer,
+    onReading,
+  );
 
   function put(change: Partial<Claim>) {
     const next = { ...claim, ...change };
@@ -258,9 +266,11 @@ export function ClaimCheck({
             <p className="text-base text-quiet italic">
               {stale
                 ? "Reading…"
-                : claim.quantity.trim() === ""
-                  ? "Fill in the symbol as it is printed."
-                  : "Now write the value that the key claims for it."}
+                : way === "line"
+                  ? claim.quantity.trim() === ""
+                  : cellsOf(way, claim.quantity) === null
+                    ? "Fill in the symbol as it is printed."
+                    : "Now write the value that the key claims for it."}
             </p>
           )}
           <p role="status" className="sr-only">

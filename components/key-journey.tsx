@@ -7,7 +7,7 @@ import { Mark } from "@/components/marks";
 /** How a key travels, drawn as four proofs of the same line: written, marked, settled, sealed. */
 export function KeyJourney() {
   return (
-    <ol className="grid gap-x-0 gap-y-10 sm:grid-cols-2 lg:grid-cols-4">
+    <ol className="grid gap-x-7 gap-y-10 sm:grid-cols-2 lg:grid-cols-4">
       <Stage
         number={1}
         title="An author writes a claim"
@@ -83,9 +83,9 @@ function Stage({
   children: ReactNode;
 }) {
   return (
-    <li className="relative px-3 first:pl-0 last:pr-0 max-sm:px-0 lg:pr-5">
+    <li className="relative">
       <div aria-hidden="true" className="sheet flex h-36 items-stretch overflow-hidden">
-        <div className="grid flex-1 content-center gap-2.5 px-3.5">{children}</div>
+        <div className="grid flex-1 content-center gap-2.5 pr-20 pl-3.5">{children}</div>
       </div>
       <h3 className="mt-3 flex items-baseline gap-2 text-lg leading-snug">
         <span
@@ -134,7 +134,7 @@ function Line({ struck, children }: { struck: boolean; children: ReactNode }) {
 
 function MarginScrawl({ children }: { children: ReactNode }) {
   return (
-    <span className="absolute top-0 right-3 grid h-36 w-17 place-items-center content-center gap-1.5 border-l-3 border-double border-rule text-red last:right-0 max-sm:right-0 lg:right-5">
+    <span className="absolute top-0 right-0 grid h-36 w-17 place-items-center content-center gap-1.5 border-l-3 border-double border-rule text-red">
       {children}
     </span>
   );

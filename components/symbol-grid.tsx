@@ -243,28 +243,47 @@ function CellKey({ says, onPress, children }: { says: string; onPress: () => voi
 
 function Paren({ side }: { side: "left" | "right" }) {
   return (
-    <svg
-      viewBox="0 0 14 100"
-      preserveAspectRatio="none"
-      aria-hidden="true"
-      className={cx("w-3.5 shrink-0 self-stretch fill-ink", side === "right" && "-scale-x-100")}
-    >
-      <path d="M13.2 0C-1.6 24-1.6 76 13.2 100l.6-.7C3.4 76 3.4 24 13.8.7z" />
-    </svg>
+    <Fence side={side} viewBox="0 0 14 100" width="w-3.5">
+      <path d="M13.2 0C-1.6 24-1.6 76 13.2 100l.6-.7C3.4 76 3.4 24 13.8.7z" className="fill-ink" />
+    </Fence>
   );
 }
 
 function Angle({ side }: { side: "left" | "right" }) {
   return (
-    <svg
-      viewBox="0 0 12 100"
-      preserveAspectRatio="none"
-      aria-hidden="true"
-      className={cx("w-3 shrink-0 self-stretch stroke-ink", side === "right" && "-scale-x-100")}
-      fill="none"
-      strokeWidth="1.5"
-    >
-      <path d="M11 0 1.5 50 11 100" vectorEffect="non-scaling-stroke" />
-    </svg>
+    <Fence side={side} viewBox="0 0 12 100" width="w-2.5">
+      <path
+        d="M11 0 1.5 50 11 100"
+        fill="none"
+        strokeWidth="1.5"
+        vectorEffect="non-scaling-stroke"
+        className="stroke-ink"
+      />
+    </Fence>
+  );
+}
+
+/** A bracket as tall as what it encloses. */
+function Fence({
+  side,
+  viewBox,
+  width,
+  children,
+}: {
+  side: "left" | "right";
+  viewBox: string;
+  width: string;
+  children: ReactNode;
+}) {
+  return (
+    <span aria-hidden="true" className={cx("relative block shrink-0 self-stretch", width)}>
+      <svg
+        viewBox={viewBox}
+        preserveAspectRatio="none"
+        className={cx("absolute inset-0 size-full", side === "right" && "-scale-x-100")}
+      >
+        {children}
+      </svg>
+    </span>
   );
 }

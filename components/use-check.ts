@@ -44,10 +44,11 @@ async function ask(
 
 /**
  * Asks the verifier about a claim while it is typed: after a pause of 300 ms, one question at a time. A question that a
- * newer one has overtaken is abandoned, and its answer is dropped should it still come.
+ * newer one has overtaken is abandoned, and its answer is dropped should it still come. Nothing is asked until `complete`.
  */
 export function useCheck(
   claim: Claim,
+  complete: boolean,
   conventions: Partial<Conventions> | undefined,
   initial: CheckAnswer | null,
   onAnswer?: (answer: CheckAnswer) => void,
@@ -59,7 +60,6 @@ export function useCheck(
     failure: null,
   });
   const [attempt, setAttempt] = useState(0);
-  const complete = claim.quantity.trim() !== "" && claim.claimed.trim() !== "";
   const asked = known.key === key;
 
   useEffect(() => {
