@@ -1,5 +1,8 @@
 import { readDetails, readSlips } from "@/lib/flags/finding-details";
 import { typeset } from "@/lib/typeset/typeset";
+import type { Conventions } from "@/lib/verify/conventions";
+import { readQuantity } from "@/lib/verify/read-quantity";
+import { readValue } from "@/lib/verify/read-value";
 import type { Chapter, Claim, Finding, Flag, Settlement, User } from "@/models";
 import type { SettleWord } from "@/models/settlement";
 
@@ -11,10 +14,24 @@ type Loaded = Flag & {
   assignee: User | null;
 };
 
+const set = (latex: string | null) => (latex === null ? null : typeset(latex, { own: true }));
+
+/** A finding keeps a reading only when both sides could be read; here the one side that can is printed all the same. */
+function readAgain({ quantity, claimed }: Claim, conventions: Conventions) {
+  const left = readQuantity(quantity, conventions);
+  const right = readValue(claimed, conventions);
+  return { quantityLatex: left.ok ? left.latex : null, claimedLatex: right.ok ? right.latex : null };
+}
+
 /** One line of the queue: plain data with its formulas already typeset, for the page and for its refreshing. */
-export function toFlagRow(flag: Flag, active: Settlement | undefined, userId: string) {
+export function toFlagRow(
+  flag: Flag,
+  active: Settlement | undefined,
+  userId: string,
+  conventions: Conventions,
+) {
   const { chapter, claim, finding, claimant, assignee } = flag as Loaded;
-  const { reading } = readDetails(finding.details);
+  const reading = readDetails(finding.details).reading ?? readAgain(claim, conventions);
   const first = readSlips(finding.slips)[0];
   const settled: SettleWord | null = active?.word ?? null;
   return {
@@ -26,9 +43,9 @@ export function toFlagRow(flag: Flag, active: Settlement | undefined, userId: st
     verdict: finding.verdict as "discrepant" | "contradicted" | "unreadable",
     quantity: claim.quantity,
     claimed: claim.claimed,
-    quantityHtml: reading ? typeset(reading.quantityLatex, { own: true }) : null,
-    claimedHtml: reading ? typeset(reading.claimedLatex, { own: true }) : null,
-    exactHtml: finding.exactLatex === null ? null : typeset(finding.exactLatex, { own: true }),
+    quantityHtml: set(reading.quantityLatex),
+    claimedHtml: set(reading.claimedLatex),
+    exactHtml: set(finding.exactLatex),
     says: first?.says ?? finding.reason ?? "",
     certainty: first?.certainty ?? null,
     claimant: { id: claimant.id, name: claimant.name },

@@ -87,7 +87,6 @@ export async function getFlag(workId: string, flagId: string, query: FlagQuery, 
       ref: claim.ref,
       note: claim.note,
       page: claim.page,
-      changedSince: claim.current !== flag.claimVersion,
     },
     verdict: finding.verdict as "discrepant" | "contradicted" | "unreadable",
     reason: finding.reason ?? "",
@@ -187,7 +186,7 @@ async function currentSettlement(flagId: string) {
 }
 
 /** The number of the first key frozen after this settlement, which then stands for good; null while there is none. */
-export async function frozenAfter({
+async function frozenAfter({
   workId,
   createdAt,
 }: Pick<Settlement, "workId" | "createdAt">): Promise<number | null> {

@@ -2,6 +2,7 @@ import { Op } from "sequelize";
 
 import { gate, visibleChapters } from "@/lib/auth/gate";
 import type { SessionUser } from "@/lib/auth/user";
+import { conventionsAt } from "@/lib/flags/conventions-at";
 import { flagIncludes, flagOrder, flagWhere } from "@/lib/flags/flag-list-query";
 import { FLAGS_PER_PAGE, LAST_PAGE, type FlagQuery } from "@/lib/flags/flag-query";
 import { toFlagRow, type FlagRow } from "@/lib/flags/flag-row";
@@ -16,6 +17,8 @@ export type FlagList = {
   open: number;
   /** how many of the open ones wait for this person */
   mine: number;
+  /** when it was read; of two answers the later one holds */
+  readAt: string;
 };
 
 /**
@@ -25,7 +28,9 @@ export type FlagList = {
 export async function listFlags(workId: string, query: FlagQuery, user: SessionUser): Promise<FlagList> {
   const access = await gate(user, "flag.read", workId);
   const seen = { workId, ...visibleChapters(access) };
-  const [found, open, mine] = await Promise.all([
+  const readAt = new Date().toISOString();
+  const [conventions, found, open, mine] = await Promise.all([
+    conventionsAt(workId, access.work.conventionsVersion),
     Flag.findAndCountAll({
       where: { [Op.and]: [seen, flagWhere(query, user.id)] },
       include: flagIncludes(query),
@@ -39,12 +44,13 @@ export async function listFlags(workId: string, query: FlagQuery, user: SessionU
   ]);
   const active = await activeSettlements(found.rows.map(({ id }) => id));
   return {
-    rows: found.rows.map((flag) => toFlagRow(flag, active.get(flag.id), user.id)),
+    rows: found.rows.map((flag) => toFlagRow(flag, active.get(flag.id), user.id, conventions)),
     total: found.count,
     page: query.page,
     pages: Math.min(LAST_PAGE, Math.max(1, Math.ceil(found.count / FLAGS_PER_PAGE))),
     open,
     mine,
+    readAt,
   };
 }
 

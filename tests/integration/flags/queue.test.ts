@@ -82,7 +82,10 @@ describe("the list", () => {
 
   const addresses: [Record<string, string | string[] | undefined>, string][] = [
     [{}, ""],
-    [{ state: "settled", sort: "age", order: "descending", page: "3" }, "?state=settled&sort=age&order=descending&page=3"],
+    [
+      { state: "settled", sort: "age", order: "descending", page: "3" },
+      "?state=settled&sort=age&order=descending&page=3",
+    ],
     [{ state: ["open", "all"], page: ["1", "2"] }, ""],
     [{ state: "'; drop table flags; --", sort: "version", page: "-1" }, ""],
     [{ page: "1e3", order: "up" }, ""],
@@ -115,7 +118,9 @@ describe("a flag of another work", () => {
       expect(new Set(codes)).toEqual(new Set(["not_found"]));
     }
     expect(await codeOf(getFlag(elsewhere.work.id, flag.id, ask(), elsewhere.lead))).toBe("not_found");
-    expect(await codeOf(settleFlag({ ...settling(flag, "stet"), workId: elsewhere.work.id }, elsewhere.lead))).toBe("not_found");
+    expect(
+      await codeOf(settleFlag({ ...settling(flag, "stet"), workId: elsewhere.work.id }, elsewhere.lead)),
+    ).toBe("not_found");
     expect(await codeOf(getFlag(stage.work.id, randomUUID(), ask(), stage.lead))).toBe("not_found");
     expect((await flag.reload()).state).toBe("open");
   });
@@ -126,7 +131,12 @@ describe("assigning", () => {
     const { flag } = await buildWrong(stage);
     const elsewhere = await buildMember(stage.work, "referee", { chapterIds: [] });
     const give = async (assigneeId: string | null, user = stage.lead) =>
-      codeOf(assignFlag({ workId: flag.workId, flagId: flag.id, version: (await flag.reload()).version, assigneeId }, user));
+      codeOf(
+        assignFlag(
+          { workId: flag.workId, flagId: flag.id, version: (await flag.reload()).version, assigneeId },
+          user,
+        ),
+      );
     expect(await give(stage.claimant.id)).toBe("invalid");
     expect(await give(stage.stranger.id)).toBe("invalid");
     expect(await give(stage.production.id)).toBe("invalid");
@@ -139,7 +149,8 @@ describe("assigning", () => {
 
   it("an author takes it; the claimant and a referee do not", async () => {
     const { flag } = await buildWrong(stage);
-    const take = (user = stage.second) => codeOf(takeFlag({ workId: flag.workId, flagId: flag.id, version: 0 }, user));
+    const take = (user = stage.second) =>
+      codeOf(takeFlag({ workId: flag.workId, flagId: flag.id, version: 0 }, user));
     expect(await take(stage.claimant)).toBe("forbidden");
     expect(await take(stage.referee)).toBe("forbidden");
     expect(await take()).toBe("ok");
@@ -152,7 +163,11 @@ describe("the page of a flag", () => {
     const here = await buildStage();
     const { flag, claim } = await buildWrong(here, { assigneeId: here.second.id });
     await claim.update({ orbitKey: "k" });
-    const relative = await buildClaim({ chapterId: here.chapter.id, quantity: "(1 2 1; 0 0 0)", orbitKey: "k" });
+    const relative = await buildClaim({
+      chapterId: here.chapter.id,
+      quantity: "(1 2 1; 0 0 0)",
+      orbitKey: "k",
+    });
     await addMessage({ workId: flag.workId, flagId: flag.id, body: "Is the root too short?" }, here.claimant);
     await settleFlag(settling(flag, "correct", { reason: undefined }), here.second);
     const view = await getFlag(here.work.id, flag.id, ask({ state: "all" }), here.lead);

@@ -4,7 +4,15 @@ import { raiseFlags } from "@/lib/flags/raise-flags";
 import { settleFlag } from "@/lib/flags/settle-flag";
 import { undoSettlement } from "@/lib/flags/undo-settlement";
 import { Flag, Outbox, sequelize } from "@/models";
-import { buildChapter, buildClaim, buildFinding, buildMember, buildRun, buildWork, leadOf } from "../../factories";
+import {
+  buildChapter,
+  buildClaim,
+  buildFinding,
+  buildMember,
+  buildRun,
+  buildWork,
+  leadOf,
+} from "../../factories";
 import { buildStage, settling, type Stage } from "./stage";
 
 const raise = (runId: string) => sequelize.transaction((transaction) => raiseFlags(runId, transaction));
@@ -16,7 +24,10 @@ beforeEach(async () => {
 afterAll(() => sequelize.close());
 
 /** A run with one finding of each verdict given, on claims of the claimant. */
-async function runWith(verdicts: Parameters<typeof buildFinding>[0]["verdict"][], claimantId = stage.claimant.id) {
+async function runWith(
+  verdicts: Parameters<typeof buildFinding>[0]["verdict"][],
+  claimantId = stage.claimant.id,
+) {
   const run = await buildRun({ workId: stage.work.id, total: verdicts.length });
   const claims = [];
   for (const verdict of verdicts) {
@@ -81,7 +92,9 @@ describe("raiseFlags", () => {
     const byLead = await buildClaim({ workId: alone.id });
     const second = await buildFinding({ claimId: byLead.id, verdict: "discrepant" });
     await raise(second.runId);
-    expect((await Flag.findOne({ where: { claimId: byLead.id }, rejectOnEmpty: true })).assigneeId).toBeNull();
+    expect(
+      (await Flag.findOne({ where: { claimId: byLead.id }, rejectOnEmpty: true })).assigneeId,
+    ).toBeNull();
   });
 
   it("posts one digest for a person, however many flags", async () => {
@@ -90,7 +103,9 @@ describe("raiseFlags", () => {
     const digests = (await Outbox.findAll({ where: { kind: "flag-digest" } })).filter(
       ({ payload }) => (payload as { workId: string }).workId === stage.work.id,
     );
-    expect(digests.map(({ payload }) => (payload as { userId: string }).userId).sort()).toEqual([...told].sort());
+    expect(digests.map(({ payload }) => (payload as { userId: string }).userId).sort()).toEqual(
+      [...told].sort(),
+    );
     expect(told).toHaveLength(2);
   });
 

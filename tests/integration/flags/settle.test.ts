@@ -53,7 +53,9 @@ describe("who may settle", () => {
 
   it("is refused by the database too, whatever wrote the row", async () => {
     const { flag } = await buildWrong(stage);
-    await expect(buildSettlement({ flagId: flag.id, settlerId: stage.claimant.id })).rejects.toThrow(/settlements_by_somebody_else/);
+    await expect(buildSettlement({ flagId: flag.id, settlerId: stage.claimant.id })).rejects.toThrow(
+      /settlements_by_somebody_else/,
+    );
   });
 
   it("says in the flag's page why a claimant cannot", async () => {
@@ -69,8 +71,16 @@ describe("what each word does", () => {
     const { flag, claim } = await buildWrong(stage);
     await settleFlag(settling(flag, "correct", { reason: undefined }), stage.second);
     await claim.reload();
-    expect(claim).toMatchObject({ claimed: "sqrt(30)/15", verdict: "confirmed", current: 2, claimantId: stage.claimant.id });
-    const version = await ClaimVersion.findOne({ where: { claimId: claim.id, number: 2 }, rejectOnEmpty: true });
+    expect(claim).toMatchObject({
+      claimed: "sqrt(30)/15",
+      verdict: "confirmed",
+      current: 2,
+      claimantId: stage.claimant.id,
+    });
+    const version = await ClaimVersion.findOne({
+      where: { claimId: claim.id, number: 2 },
+      rejectOnEmpty: true,
+    });
     expect(version).toMatchObject({ claimed: "sqrt(30)/15", origin: "corrected", authorId: stage.second.id });
     const mails = await Outbox.findAll({ where: { kind: "mail" } });
     const mail = mails.find(({ payload }) => JSON.stringify(payload).includes(claim.id));
@@ -96,7 +106,10 @@ describe("what each word does", () => {
   it("leaves an audit event with what was and what is", async () => {
     const { flag } = await buildWrong(stage);
     await settleFlag(settling(flag, "correct"), stage.second);
-    const event = await AuditEvent.findOne({ where: { action: "flag.settle", subjectId: flag.id }, rejectOnEmpty: true });
+    const event = await AuditEvent.findOne({
+      where: { action: "flag.settle", subjectId: flag.id },
+      rejectOnEmpty: true,
+    });
     expect(event.actorId).toBe(stage.second.id);
     expect(event.before).toMatchObject({ claimed: "sqrt(2)/15" });
     expect(event.after).toMatchObject({ word: "correct", claimed: "sqrt(30)/15" });
@@ -175,7 +188,11 @@ describe("two people at once", () => {
 });
 
 describe("undo", () => {
-  const undo = async (flag: Flag) => ({ workId: flag.workId, flagId: flag.id, version: (await flag.reload()).version });
+  const undo = async (flag: Flag) => ({
+    workId: flag.workId,
+    flagId: flag.id,
+    version: (await flag.reload()).version,
+  });
 
   it("correct: the text comes back as a new version, and the flag is open again", async () => {
     const { flag, claim } = await buildWrong(stage);
@@ -183,9 +200,17 @@ describe("undo", () => {
     await undoSettlement(await undo(flag), stage.second);
     await claim.reload();
     await flag.reload();
-    expect(claim).toMatchObject({ claimed: "sqrt(2)/15", verdict: "discrepant", current: 3, findingId: flag.findingId });
+    expect(claim).toMatchObject({
+      claimed: "sqrt(2)/15",
+      verdict: "discrepant",
+      current: 3,
+      findingId: flag.findingId,
+    });
     expect(flag).toMatchObject({ state: "open", openClaimId: claim.id, claimVersion: 3 });
-    const version = await ClaimVersion.findOne({ where: { claimId: claim.id, number: 3 }, rejectOnEmpty: true });
+    const version = await ClaimVersion.findOne({
+      where: { claimId: claim.id, number: 3 },
+      rejectOnEmpty: true,
+    });
     expect(version.origin).toBe("undone");
     await settleFlag(settling(flag, "stet"), stage.lead);
     expect(await Settlement.count({ where: { flagId: flag.id } })).toBe(2);
@@ -212,7 +237,9 @@ describe("undo", () => {
     const { flag } = await buildWrong(stage);
     await settleFlag(settling(flag, "correct"), stage.second);
     const input = await undo(flag);
-    const codes = await Promise.all(Array.from({ length: 10 }, () => codeOf(undoSettlement(input, stage.second))));
+    const codes = await Promise.all(
+      Array.from({ length: 10 }, () => codeOf(undoSettlement(input, stage.second))),
+    );
     expect(codes.filter((code) => code === "ok")).toHaveLength(1);
     expect(codes.filter((code) => code === "conflict")).toHaveLength(9);
     expect(await ClaimVersion.count({ where: { claimId: flag.claimId } })).toBe(3);

@@ -58,7 +58,11 @@ export async function buildWrong(
   });
   await buildFinding({ claimId: claim.id, verdict: "discrepant" });
   await claim.reload();
-  const flag = await buildFlag({ claimId: claim.id, findingId: claim.findingId ?? "", assigneeId: given.assigneeId ?? null });
+  const flag = await buildFlag({
+    claimId: claim.id,
+    findingId: claim.findingId ?? "",
+    assigneeId: given.assigneeId ?? null,
+  });
   return { claim, flag };
 }
 

@@ -27,7 +27,11 @@ beforeAll(async () => {
   await buildJudged(stage, { quantity: "(1/2 1/2 1; 1/2 -1/2 0)", claimed: "sqrt(6)/6" });
   await buildJudged(stage, { quantity: "<1 0 1 0 | 0 0>", claimed: "-0.5774" });
   await buildJudged(stage, { quantity: "(2 2 1; 0 0 0)", claimed: "0" });
-  await buildJudged(stage, { quantity: "<1/2 -1/2 1/2 1/2 | 0 0>", claimed: "-1/sqrt(2)", verdict: "confirmed-not-house-form" });
+  await buildJudged(stage, {
+    quantity: "<1/2 -1/2 1/2 1/2 | 0 0>",
+    claimed: "-1/sqrt(2)",
+    verdict: "confirmed-not-house-form",
+  });
   const { flag } = await buildWrong(stage);
   await settleFlag(settling(flag, "correct"), stage.second);
   await freezeKey({ workId: stage.work.id, number: 1, confirmation: "key 1" }, stage.lead);
@@ -39,7 +43,13 @@ const conventions = { ...DEFAULT_CONVENTIONS, houseForm: "rationalised" as const
 
 describe("downloads", () => {
   it("are for lead, author and production, and written into the audit", async () => {
-    const people = { lead: stage.lead, author: stage.second, production: stage.production, referee: stage.referee, stranger: stage.stranger };
+    const people = {
+      lead: stage.lead,
+      author: stage.second,
+      production: stage.production,
+      referee: stage.referee,
+      stranger: stage.stranger,
+    };
     const answers = Object.fromEntries(
       await Promise.all(
         Object.entries(people).map(async ([who, user]) => {
@@ -55,21 +65,36 @@ describe("downloads", () => {
         }),
       ),
     );
-    expect(answers).toEqual({ lead: "ok", author: "ok", production: "ok", referee: "not_found", stranger: "not_found" });
+    expect(answers).toEqual({
+      lead: "ok",
+      author: "ok",
+      production: "ok",
+      referee: "not_found",
+      stranger: "not_found",
+    });
     const events = await AuditEvent.findAll({ where: { workId: stage.work.id, action: "key.export" } });
     expect(events.filter(({ actorId }) => actorId === stage.production.id)).toHaveLength(3);
-    expect(events.some(({ actorId }) => actorId === stage.stranger.id || actorId === stage.referee.id)).toBe(false);
+    expect(events.some(({ actorId }) => actorId === stage.stranger.id || actorId === stage.referee.id)).toBe(
+      false,
+    );
   });
 
   it("a number that was never frozen is not there", async () => {
     for (const number of [0, 2, 999_999])
-      await expect(exportKey(stage.work.id, number, "json", stage.lead)).rejects.toMatchObject({ code: "not_found" });
-    for (const text of ["0", "-1", "1.0", "01", "1e3", "9999999", "one", ""]) expect(KeyNumber.safeParse(text).success).toBe(false);
+      await expect(exportKey(stage.work.id, number, "json", stage.lead)).rejects.toMatchObject({
+        code: "not_found",
+      });
+    for (const text of ["0", "-1", "1.0", "01", "1e3", "9999999", "one", ""])
+      expect(KeyNumber.safeParse(text).success).toBe(false);
   });
 
   it("JSON: the hash is that of the canonical JSON without the two members beside it; read again, all confirmed", async () => {
     const { body } = await exportKey(stage.work.id, 1, "json", stage.production);
-    const { sha256, export: made, ...content } = JSON.parse(body) as KeyContent & { sha256: string; export: { by: string } };
+    const {
+      sha256,
+      export: made,
+      ...content
+    } = JSON.parse(body) as KeyContent & { sha256: string; export: { by: string } };
     expect(createHash("sha256").update(canonicalJson(content)).digest("hex")).toBe(sha256);
     expect(made.by).toBe(stage.production.name);
     const file = readKeyFile("key.json", bytes(JSON.stringify(plainKey(JSON.parse(body)))));
@@ -166,7 +191,10 @@ describe("what people wrote, in a file", () => {
 
   it("LaTeX: no word of a person is a command, and no line of a comment ends early", () => {
     const tex = keyAsLatex(
-      content({ ref: "\\write18{x}", settlement: { word: "stet", reason: "50% & $x$ \\input{y}", convention: "#1 ~^", by: "B", at: "" } }),
+      content({
+        ref: "\\write18{x}",
+        settlement: { word: "stet", reason: "50% & $x$ \\input{y}", convention: "#1 ~^", by: "B", at: "" },
+      }),
       "0".repeat(64),
       { by: "Eve\n\\input{/etc/passwd}", at: "" },
     );

@@ -37,7 +37,8 @@ function canonical(value: unknown): string {
     return JSON.stringify(value);
   }
   const names = Object.keys(value).sort((a, b) => {
-    for (let i = 0; i < Math.min(a.length, b.length); i++) if (a.charCodeAt(i) !== b.charCodeAt(i)) return a.charCodeAt(i) - b.charCodeAt(i);
+    for (let i = 0; i < Math.min(a.length, b.length); i++)
+      if (a.charCodeAt(i) !== b.charCodeAt(i)) return a.charCodeAt(i) - b.charCodeAt(i);
     return a.length - b.length;
   });
   return `{${names.map((name) => `${JSON.stringify(name)}:${canonical((value as Record<string, unknown>)[name])}`).join(",")}}`;
@@ -46,13 +47,20 @@ function canonical(value: unknown): string {
 describe("freezing", () => {
   it("writes down every claim with what was settled by whom, hashed over its canonical JSON", async () => {
     const right = await buildJudged(stage, { ref: "1.1(a)" });
-    const other = await buildJudged(stage, { ref: "1.1(b)", claimed: "sqrt(2/15)", verdict: "confirmed-not-house-form" });
+    const other = await buildJudged(stage, {
+      ref: "1.1(b)",
+      claimed: "sqrt(2/15)",
+      verdict: "confirmed-not-house-form",
+    });
     const stet = await buildWrong(stage);
     await settleFlag(settling(stet.flag, "stet", { reason: "Ünsere “Phase” — \u2028 stands" }), stage.second);
     const gone = await buildWrong(stage);
     await settleFlag(settling(gone.flag, "withdraw"), stage.second);
     const open = await buildJudged(stage, { verdict: "undecided", claimed: "1" });
-    await nameWaiver({ workId: stage.work.id, claimId: open.id, claimVersion: 1, reason: "Checked by hand, twice." }, stage.lead);
+    await nameWaiver(
+      { workId: stage.work.id, claimId: open.id, claimVersion: 1, reason: "Checked by hand, twice." },
+      stage.lead,
+    );
 
     const { sha256 } = await freeze();
     const row = await FrozenKey.findOne({ where: { workId: stage.work.id }, rejectOnEmpty: true });
@@ -74,10 +82,23 @@ describe("freezing", () => {
       value: { text: "sqrt(30)/15" },
       settlement: { word: "stet", by: stage.second.name, convention: "symbols without the phase, table A.4" },
     });
-    expect(claim(open.id)).toMatchObject({ verdict: "undecided", waiver: { by: stage.lead.name, reason: "Checked by hand, twice." } });
-    expect(content.withdrawn).toMatchObject([{ ref: gone.claim.ref, settlement: { word: "withdraw", by: stage.second.name } }]);
-    expect(content).toMatchObject({ number: "1", previous: null, frozenBy: stage.lead.name, conventionsVersion: "1" });
-    const event = await AuditEvent.findOne({ where: { action: "key.freeze", workId: stage.work.id }, rejectOnEmpty: true });
+    expect(claim(open.id)).toMatchObject({
+      verdict: "undecided",
+      waiver: { by: stage.lead.name, reason: "Checked by hand, twice." },
+    });
+    expect(content.withdrawn).toMatchObject([
+      { ref: gone.claim.ref, settlement: { word: "withdraw", by: stage.second.name } },
+    ]);
+    expect(content).toMatchObject({
+      number: "1",
+      previous: null,
+      frozenBy: stage.lead.name,
+      conventionsVersion: "1",
+    });
+    const event = await AuditEvent.findOne({
+      where: { action: "key.freeze", workId: stage.work.id },
+      rejectOnEmpty: true,
+    });
     expect(event.after).toMatchObject({ number: 1, sha256, claims: 4 });
   });
 
@@ -134,13 +155,17 @@ describe("freezing", () => {
         },
         stage.claimant,
       );
-    const [frozen, ...edits] = await Promise.all([codeOf(freeze()), ...claims.map((claim) => codeOf(edit(claim)))]);
+    const [frozen, ...edits] = await Promise.all([
+      codeOf(freeze()),
+      ...claims.map((claim) => codeOf(edit(claim))),
+    ]);
     expect(edits.every((code) => code === "ok")).toBe(true);
     expect(["ok", "conflict"]).toContain(frozen);
     const keys = await FrozenKey.findAll({ where: { workId: stage.work.id } });
     expect(keys).toHaveLength(frozen === "ok" ? 1 : 0);
     for (const key of keys)
-      for (const claim of (JSON.parse(key.canonicalJson) as KeyContent).claims) expect(claim.claimed).toBe("sqrt(30)/15");
+      for (const claim of (JSON.parse(key.canonicalJson) as KeyContent).claims)
+        expect(claim.claimed).toBe("sqrt(30)/15");
   });
 
   it("ends the undoing of what it holds", async () => {
@@ -148,9 +173,10 @@ describe("freezing", () => {
     await settleFlag(settling(flag, "correct"), stage.second);
     await freeze();
     await flag.reload();
-    const error = await undoSettlement({ workId: flag.workId, flagId: flag.id, version: flag.version }, stage.second).catch(
-      (thrown: unknown) => thrown,
-    );
+    const error = await undoSettlement(
+      { workId: flag.workId, flagId: flag.id, version: flag.version },
+      stage.second,
+    ).catch((thrown: unknown) => thrown);
     expect(error).toMatchObject({ code: "conflict", message: expect.stringContaining("Key 1") as string });
   });
 
@@ -169,7 +195,12 @@ describe("freezing", () => {
       same: 1,
       added: [{ id: added.id }],
       gone: [{ id: leaving.id }],
-      changed: [{ before: { id: changing.id, answer: { text: "sqrt(30)/15" } }, after: { answer: { text: "-sqrt(3)/3" } } }],
+      changed: [
+        {
+          before: { id: changing.id, answer: { text: "sqrt(30)/15" } },
+          after: { answer: { text: "-sqrt(3)/3" } },
+        },
+      ],
     });
     expect(view.content.claims.some(({ id }) => id === kept.id)).toBe(true);
     expect(view.intact).toBe(true);
@@ -193,8 +224,12 @@ describe("the database", () => {
       database: new URL(process.env.DATABASE_URL ?? "").pathname.slice(1),
     });
     try {
-      await expect(owner.query("update frozen_keys set claims = 7 where id = ?", [key.id])).rejects.toThrow(/never changed/);
-      await expect(owner.query("delete from frozen_keys where id = ?", [key.id])).rejects.toThrow(/never deleted/);
+      await expect(owner.query("update frozen_keys set claims = 7 where id = ?", [key.id])).rejects.toThrow(
+        /never changed/,
+      );
+      await expect(owner.query("delete from frozen_keys where id = ?", [key.id])).rejects.toThrow(
+        /never deleted/,
+      );
     } finally {
       await owner.end();
     }
@@ -215,6 +250,8 @@ describe("the database", () => {
   });
 
   it("no number gets into a key but as text", () => {
-    expect(() => canonicalJson({ claims: [{ page: 12 }] } as unknown as KeyContent)).toThrow(/claims\/0\/page/);
+    expect(() => canonicalJson({ claims: [{ page: 12 }] } as unknown as KeyContent)).toThrow(
+      /claims\/0\/page/,
+    );
   });
 });

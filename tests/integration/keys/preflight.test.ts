@@ -1,6 +1,7 @@
 import { afterAll, beforeEach, describe, expect, it } from "vitest";
 
-import { AppError } from "@/lib/errors";
+import { editClaim } from "@/lib/claims/edit-claim";
+import type { AppError } from "@/lib/errors";
 import { settleFlag } from "@/lib/flags/settle-flag";
 import type { Hindrance } from "@/lib/keys/judge-readiness";
 import { listKeys } from "@/lib/keys/list-keys";
@@ -29,10 +30,22 @@ describe("preflight", () => {
       prepare: () => buildJudged(stage, { claimed: "sqrt(2/15)", verdict: "confirmed-not-house-form" }),
       kind: null,
     },
-    { name: "a claim that no run has seen", prepare: () => buildClaim({ chapterId: stage.chapter.id }), kind: "unchecked" },
+    {
+      name: "a claim that no run has seen",
+      prepare: () => buildClaim({ chapterId: stage.chapter.id }),
+      kind: "unchecked",
+    },
     { name: "an open flag", prepare: () => buildWrong(stage), kind: "open-flag" },
-    { name: "a wrong claim without a flag", prepare: () => buildJudged(stage, { verdict: "discrepant" }), kind: "unsettled" },
-    { name: "an undecided claim", prepare: () => buildJudged(stage, { verdict: "undecided" }), kind: "undecided" },
+    {
+      name: "a wrong claim without a flag",
+      prepare: () => buildJudged(stage, { verdict: "discrepant" }),
+      kind: "unsettled",
+    },
+    {
+      name: "an undecided claim",
+      prepare: () => buildJudged(stage, { verdict: "undecided" }),
+      kind: "undecided",
+    },
     { name: "correct", prepare: () => settled("correct"), kind: null },
     { name: "stet", prepare: () => settled("stet"), kind: null },
     { name: "reword", prepare: () => settled("reword"), kind: "reword" },
@@ -41,9 +54,10 @@ describe("preflight", () => {
       name: "a stet on an earlier version",
       prepare: async () => {
         const claim = await settled("stet");
-        const { nextVersion } = await import("@/lib/claims/edit-claim");
-        await sequelize.transaction((transaction) =>
-          nextVersion(claim, { ...claim.get(), claimed: "1" } as never, { authorId: stage.claimant.id, origin: "typed" }, transaction),
+        const { id: claimId, workId, version, ref, quantity } = claim;
+        await editClaim(
+          { workId, claimId, version, ref, quantity, claimed: "1/7", note: null, page: null },
+          stage.claimant,
         );
       },
       kind: "unchecked",
@@ -105,14 +119,23 @@ describe("preflight", () => {
       ),
     );
     expect(codes).toEqual(["not_found", "not_found", "not_found"]);
-    expect(await listKeys(stage.work.id, stage.production)).toMatchObject({ preflight: null, keys: [], may: { freeze: false } });
+    expect(await listKeys(stage.work.id, stage.production)).toMatchObject({
+      preflight: null,
+      keys: [],
+      may: { freeze: false },
+    });
   });
 });
 
 describe("a waiver", () => {
   const waive = (claim: { id: string; current: number }, user = stage.lead, claimVersion = claim.current) =>
     nameWaiver(
-      { workId: stage.work.id, claimId: claim.id, claimVersion, reason: "Beyond the stated limit, checked by hand." },
+      {
+        workId: stage.work.id,
+        claimId: claim.id,
+        claimVersion,
+        reason: "Beyond the stated limit, checked by hand.",
+      },
       user,
     ).then(
       () => "ok",
@@ -136,7 +159,12 @@ describe("a waiver", () => {
   });
 
   it("needs a reason", () => {
-    const read = NameWaiver.safeParse({ workId: stage.work.id, claimId: stage.work.id, claimVersion: 1, reason: "  no  " });
+    const read = NameWaiver.safeParse({
+      workId: stage.work.id,
+      claimId: stage.work.id,
+      claimVersion: 1,
+      reason: "  no  ",
+    });
     expect(read.success).toBe(false);
   });
 });

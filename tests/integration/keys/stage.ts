@@ -5,7 +5,12 @@ import type { Stage } from "../flags/stage";
 /** A claim that a run has judged, in a problem of its own. */
 export async function buildJudged(
   stage: Stage,
-  given: { quantity?: string; claimed?: string; verdict?: Parameters<typeof buildFinding>[0]["verdict"]; ref?: string } = {},
+  given: {
+    quantity?: string;
+    claimed?: string;
+    verdict?: Parameters<typeof buildFinding>[0]["verdict"];
+    ref?: string;
+  } = {},
 ): Promise<Claim> {
   const problem = await buildProblem({ chapterId: stage.chapter.id });
   const claim = await buildClaim({

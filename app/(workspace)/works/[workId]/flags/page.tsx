@@ -1,6 +1,5 @@
 import type { Metadata } from "next";
 
-import { LinkButton } from "@/components/ui/button";
 import { PageBody, PageHeader } from "@/components/ui/page";
 import { orNotFound } from "@/lib/action";
 import { requireUser } from "@/lib/auth/session";
@@ -23,11 +22,6 @@ export default async function FlagsPage({ params, searchParams }: PageProps<"/wo
       <PageHeader
         trail={[{ label: filters.work.title, href: `/works/${workId}` }, { label: "review queue" }]}
         title="Review queue"
-        actions={
-          <LinkButton href={`/works/${workId}/keys`} variant="quiet">
-            Keys
-          </LinkButton>
-        }
       >
         {inWords(list.open, list.mine)}
       </PageHeader>

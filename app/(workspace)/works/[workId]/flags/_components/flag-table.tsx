@@ -70,7 +70,8 @@ export function FlagTable({
     revalidateOnMount: false,
     keepPreviousData: false,
   });
-  const list = data ?? initial;
+  // Coming back to the page brings a newer list than the one that was kept from the last visit.
+  const list = data && data.readAt > initial.readAt ? data : initial;
   const table = useTable({
     features,
     columns,

@@ -1,6 +1,7 @@
 "use client";
 
 import { zodResolver } from "@hookform/resolvers/zod";
+import { useEffect } from "react";
 import { useForm } from "react-hook-form";
 import type { z } from "zod";
 
@@ -8,6 +9,7 @@ import { Button } from "@/components/ui/button";
 import { TextArea } from "@/components/ui/field";
 import { AddMessage } from "@/lib/flags/schema";
 import { addMessageAction } from "../actions";
+import { onDraft } from "./draft";
 
 type Values = z.input<typeof AddMessage>;
 
@@ -18,6 +20,15 @@ export function MessageForm({ workId, flagId }: { workId: string; flagId: string
     defaultValues: { workId, flagId, body: "" },
   });
   const { errors, isSubmitting } = form.formState;
+  const { getValues, setValue } = form;
+  useEffect(
+    () =>
+      onDraft((text) => {
+        const written = getValues("body");
+        setValue("body", written ? `${written}\n\n${text}` : text);
+      }),
+    [getValues, setValue],
+  );
   const submit = form.handleSubmit(async (values) => {
     const result = await addMessageAction(values);
     if (result.ok) form.reset({ workId, flagId, body: "" });

@@ -1,7 +1,6 @@
 "use client";
 
 import { zodResolver } from "@hookform/resolvers/zod";
-import Link from "next/link";
 import { useRouter } from "next/navigation";
 import { useState } from "react";
 import { useForm, useWatch } from "react-hook-form";
@@ -16,6 +15,7 @@ import { Notice } from "@/components/ui/notice";
 import { useToast } from "@/components/ui/toast";
 import { SettleFlag } from "@/lib/flags/schema";
 import { settleFlagAction } from "../actions";
+import { offerDraft } from "./draft";
 import type { SettleView } from "./settle-view";
 
 type Values = z.input<typeof SettleFlag>;
@@ -93,7 +93,7 @@ export function SettleForm(view: SettleView) {
   return (
     <form onSubmit={(event) => void submit(event)} noValidate className="grid gap-5">
       <ErrorSummary key={attempt} items={summary} title="This was not settled yet" />
-      {conflict ? <ConflictNotice conflict={conflict} /> : null}
+      {conflict ? <ConflictNotice conflict={conflict} words={() => typed(form.getValues())} /> : null}
       <RadioCards
         legend={`How should ${ref} be settled?`}
         columns={2}
@@ -168,33 +168,35 @@ export function SettleForm(view: SettleView) {
   );
 }
 
-/** Somebody was quicker: what they did, with this person's own words still below. */
-function ConflictNotice({ conflict }: { conflict: Conflict }) {
+/** What the person has written so far, convention first. */
+const typed = ({ convention, reason }: Pick<Values, "convention" | "reason">) =>
+  [convention, reason].filter(Boolean).join("\n\n");
+
+/** Somebody was quicker: what they did, with this person's own words kept. */
+function ConflictNotice({ conflict, words }: { conflict: Conflict; words: () => string }) {
   const router = useRouter();
+  const gone = conflict.state !== "open";
+  const show = () => {
+    const text = words();
+    // The form goes away with the open flag, so what was typed moves to the discussion.
+    if (gone && text !== "") offerDraft(text);
+    router.refresh();
+  };
   return (
     <Notice
       kind="warn"
       live
       title={conflict.message}
       action={
-        <Button size="small" onClick={() => router.refresh()}>
+        <Button size="small" onClick={show}>
           Show the flag as it is now
         </Button>
       }
     >
       {conflict.reason ? <p>Their reason: {conflict.reason}</p> : null}
       <p>
-        Nothing of yours was saved; what you typed is still here.
-        {conflict.state === "settled" ? (
-          <>
-            {" "}
-            You can put it into the{" "}
-            <Link className="link" href="#discussion">
-              discussion
-            </Link>
-            .
-          </>
-        ) : null}
+        Nothing of yours was saved, and what you typed is still here.
+        {gone ? " When you go on, it moves into the box of the discussion below." : ""}
       </p>
     </Notice>
   );
