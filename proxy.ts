@@ -10,15 +10,15 @@ export function proxy(request: NextRequest): NextResponse {
   if (isForeignWrite(request))
     return new NextResponse("This request came from another site and was not carried out.", { status: 403 });
   const nonce = btoa(String.fromCharCode(...crypto.getRandomValues(new Uint8Array(16))));
-  const policy = contentPolicy(nonce, request.nextUrl.protocol === "https:");
+  const secure = process.env.APP_URL?.startsWith("https:") ?? false;
+  const policy = contentPolicy(nonce, secure);
   const headers = new Headers(request.headers);
   // Next reads the nonce from the policy on the request and puts it on its own scripts.
   headers.set("content-security-policy", policy);
   headers.set("x-nonce", nonce);
   const response = NextResponse.next({ request: { headers } });
   response.headers.set("content-security-policy", policy);
-  if (process.env.APP_URL?.startsWith("https:"))
-    response.headers.set("strict-transport-security", "max-age=63072000; includeSubDomains");
+  if (secure) response.headers.set("strict-transport-security", "max-age=63072000; includeSubDomains");
   return response;
 }
 
