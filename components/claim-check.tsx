@@ -117,7 +117,7 @@ export function ClaimCheck({
             </div>
           </fieldset>
 
-          <div className="mt-5 flex flex-wrap items-center gap-x-4 gap-y-4">
+          <div className="mt-7 flex flex-wrap items-center gap-x-4 gap-y-4">
             <div className="min-w-0">
               {way === "line" ? (
                 <span className="block font-ui">
