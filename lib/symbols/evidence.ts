@@ -134,7 +134,7 @@ function steps(
   return [
     `A=${letters[0]},\\quad B=${letters[1]},\\quad C=${letters[2]},\\quad k=${parts.from},\\ldots,${parts.to}`,
     `\\textstyle\\sum = ${sum}${terms.length === 1 && sum === parts.total.toString() ? "" : ` = ${parts.total}`}`,
-    `${q.kind === "cg" ? `(2J+1)\\cdot\\text{the number under the root, with } 2J+1=${c + 1}\\text{: } ` : "\\text{under the root: }"}${primesLatex(primes)}`,
+    `${q.kind === "cg" ? `\\text{under the root, with the factor }2J+1=${c + 1}\\text{: }` : "\\text{under the root: }"}${primesLatex(primes)}`,
     `${quantityLatex(q)} = ${front}${parts.total < 0n ? `\\left(${parts.total}\\right)` : parts.total}\\cdot\\sqrt{${primesLatex(primes)}} = ${toLatex(value)}`,
   ];
 }

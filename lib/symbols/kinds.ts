@@ -71,7 +71,7 @@ export type Evidence = {
   /** Given instead of the terms when there are more than a stated number of them. */
   summary: { count: number; first: EvidenceTerm; last: EvidenceTerm; largest: EvidenceTerm } | null;
   total: string;
-  /** The number under the root, in primes. */
+  /** The number under the root, in primes; for a CG it includes the factor 2J+1. */
   prefactor: { primes: [number, number][]; latex: string };
   sign: { exponent: string; value: 1 | -1 } | null;
   value: { text: string; latex: string; decimal: string };

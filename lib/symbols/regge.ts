@@ -1,4 +1,4 @@
-import { divide, equals, multiply, negate, ONE, root, type Exact } from "@/lib/symbols/exact";
+import { divide, equals, multiply, negate, ONE, root } from "@/lib/symbols/exact";
 import { fromTwice, type Twice } from "@/lib/symbols/half";
 import type { Kind, Orbit, Quantity, Variant } from "@/lib/symbols/kinds";
 import { clebschGordan, reggeSquare, threeJ, type ThreeJ } from "@/lib/symbols/three-j";
@@ -252,9 +252,4 @@ export function orbitSymbols(q: Quantity): Quantity[] {
     ELEMENTS.map((e) => applyElement(e, square)).map((image) => [image.join(" "), image]),
   );
   return [...images.values()].map((image) => quantityOf("3j", symbolOfSquare(image)));
-}
-
-/** The value a CG or 3j claim implies for the canonical symbol of its orbit: claimed / factor. */
-export function impliedCanonical(q: Quantity, claimed: Exact): Exact {
-  return divide(claimed, orbit(q).factor);
 }

@@ -1,11 +1,4 @@
-import {
-  listPrimes,
-  timesFactorial,
-  timesInteger,
-  timesRoot,
-  unit,
-  type PrimeExponents,
-} from "@/lib/symbols/primes";
+import { timesFactorial, timesInteger, timesRoot, unit, type PrimeExponents } from "@/lib/symbols/primes";
 import { ZERO, type Exact } from "@/lib/symbols/exact";
 import type { Twice } from "@/lib/symbols/half";
 
@@ -97,11 +90,6 @@ export function clebschGordan(entries: ThreeJ): Exact {
   timesInteger(prefactor, c + 1, 1);
   const phase = ((a - b - z) / 2) % 2 === 0 ? 1n : -1n;
   return timesRoot(phase * BigInt(sign) * total, prefactor);
-}
-
-/** Pairs [prime, exponent] of the number under the root. */
-export function prefactorPrimes(parts: RacahParts): [number, number][] {
-  return listPrimes(parts.prefactor);
 }
 
 /** C(n, k) for 0 ≤ k ≤ n, multiplied up so that each step is whole. */

@@ -65,7 +65,7 @@ describe("published and oracle values of 6j and Racah W", () => {
     ["oracle-open.jsonl", "6j", 700],
     ["published.jsonl", "racah", 3],
     ["oracle-open.jsonl", "racah", 350],
-  ] as const)("%s, %s: all %i rows by both routes", (file, kind, count) => {
+  ] as const)("%s, %s: all %i rows, every fifth by both routes", (file, kind, count) => {
     const list = rows(file, kind);
     expect(list).toHaveLength(count);
     const differing = list.filter((row, n) => {
@@ -73,7 +73,7 @@ describe("published and oracle values of 6j and Racah W", () => {
       const expected = exactOf(row.value);
       const first = kind === "6j" ? sixJ(entries) : racahW(entries);
       if (!equals(first, expected)) return true;
-      if (n % 3) return false; // the second route on every third row
+      if (n % 5) return false; // the second route on every fifth row
       return !equals(kind === "6j" ? sixJFromThreeJ(entries) : racahW(entries, sixJFromThreeJ), expected);
     });
     expect(differing).toEqual([]);
@@ -142,7 +142,7 @@ describe("laws of the 6j, exact", () => {
       fc.property(allowedSixJ(12), (s) => {
         same(sixJ(s), sixJFromThreeJ(s), s.join(" "));
       }),
-      { numRuns: 150 },
+      { numRuns: 60 },
     );
   });
 
@@ -162,7 +162,7 @@ describe("laws of the 6j, exact", () => {
         );
         same(total, step === 0 ? ONE : ZERO, `${a} ${b} ${d} ${e} ${f} ${other}`);
       }),
-      { numRuns: 100 },
+      { numRuns: 50 },
     );
   });
 
@@ -183,7 +183,7 @@ describe("laws of the 6j, exact", () => {
           same(sum(terms), sixJ(doubled(a, d, p, b, c, q)), `${a} ${b} ${c} ${d} ${p} ${q}`);
         }
       }),
-      { numRuns: 100 },
+      { numRuns: 50 },
     );
   });
 });
@@ -209,7 +209,7 @@ describe("symmetries of the 6j", () => {
         same(sixJ(sixJOfKey(key)), sixJ(s), key);
         expect(sixJKey(sixJOfKey(key))).toBe(key);
       }),
-      { numRuns: 25 },
+      { numRuns: 12 },
     );
   });
 
