@@ -48,6 +48,6 @@ export async function openKeptMail(name: string): Promise<OpenedMail> {
     from: mail.from?.text ?? "",
     at: (mail.date ?? new Date(0)).toISOString(),
     text: mail.text ?? "",
-    html: mail.html === false ? null : mail.html,
+    html: typeof mail.html === "string" ? mail.html : null,
   };
 }
