@@ -223,6 +223,7 @@ function announce(folder, env, { demo, ownMail, mailFolder, since }) {
 
 /** Ends everything: first those that use the servers, then the servers. */
 async function shutDown(folder, code) {
+  for (const keeper of keepers) keeper.stopping = true;
   const servers = ["MariaDB", "Redis"];
   const isServer = ({ name }) => servers.includes(name);
   await Promise.all(keepers.filter((keeper) => !isServer(keeper)).map((keeper) => retire(keeper, 5_000)));

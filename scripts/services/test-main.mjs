@@ -22,12 +22,12 @@ let closeServers = async () => {};
 export async function main() {
   const end = (code) =>
     (ending ??= (async () => {
-      await stopAll(3_000);
-      await closeServers();
+      await Promise.all([closeServers(), stopAll(3_000)]);
       console.log(`tests: ${counts.passed} passed, ${counts.failed} failed`);
       process.exit(code);
     })());
   const cutOff = (why) => {
+    if (ending !== null) return;
     console.error(`\n${why}`);
     counts.failed += 1;
     void end(1);
@@ -117,6 +117,7 @@ function makeStage(folder, env) {
     let outcome = { passed: 0, failed: 1 };
     await step(name, async () => {
       outcome = await work();
+      if (ending !== null) return new Promise(() => {}); // cut off: it is neither passed nor failed
       counts.passed += outcome.passed;
       counts.failed += outcome.failed;
       const skipped = outcome.skipped ? `, ${outcome.skipped} skipped` : "";
