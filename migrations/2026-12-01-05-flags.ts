@@ -66,7 +66,8 @@ export const up = ({ context }: Migration) =>
       CONSTRAINT settlements_undoer_fk FOREIGN KEY (undone_by_id) REFERENCES users (id),
       CONSTRAINT settlements_by_somebody_else CHECK (settler_id <> claimant_id),
       CONSTRAINT settlements_word_known CHECK (word IN ('correct', 'stet', 'reword', 'withdraw')),
-      CONSTRAINT settlements_reasoned CHECK (word NOT IN ('stet', 'reword') OR CHAR_LENGTH(TRIM(reason)) > 0),
+      CONSTRAINT settlements_reasoned CHECK (
+        word NOT IN ('stet', 'reword') OR (reason IS NOT NULL AND CHAR_LENGTH(TRIM(reason)) > 0)),
       CONSTRAINT settlements_in_force CHECK (
         (undone_at IS NULL AND undone_by_id IS NULL AND active_flag_id IS NOT NULL AND active_flag_id = flag_id)
         OR (undone_at IS NOT NULL AND undone_by_id IS NOT NULL AND active_flag_id IS NULL))

@@ -49,8 +49,10 @@ export function isCommonPassword(password: string): boolean {
   const packed = plain.replace(/[\s\p{P}\p{S}]/gu, "");
   if (new Set(plain).size <= 3 || isRepeated(plain) || isRepeated(packed)) return true;
   if (RUNS.some((row) => (row + row).includes(packed))) return true;
-  const spelled = [...plain].map((character) => LEET[character] ?? character).join("");
-  return [plain, spelled].some((text) => isMadeOfCommonWords(text));
+  // Digits before and after are only decoration; digits inside stand for letters.
+  const core = plain.replace(/^[^\p{L}]+|[^\p{L}]+$/gu, "");
+  const spelled = [...core].map((character) => LEET[character] ?? character).join("");
+  return [plain, core, spelled].some((text) => isMadeOfCommonWords(text));
 }
 
 function isRepeated(text: string): boolean {
