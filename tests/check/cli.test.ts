@@ -2,7 +2,10 @@ import { execFile } from "node:child_process";
 import { mkdtempSync, rmSync, writeFileSync } from "node:fs";
 import { tmpdir } from "node:os";
 import path from "node:path";
-import { afterAll, describe, expect, it } from "vitest";
+import { afterAll, describe, expect, it, vi } from "vitest";
+
+// Each case starts a process of its own.
+vi.setConfig({ testTimeout: 120_000 });
 
 const root = path.resolve(import.meta.dirname, "../..");
 const folder = mkdtempSync(path.join(tmpdir(), "surdmark-check-"));
