@@ -148,7 +148,7 @@ export const DEMO_CHAPTERS: readonly DemoChapter[] = [
         page: "33",
         claimant: "lead",
         statement:
-          "For the table at the end of the chapter: six symbols to four decimal places, rounded as usual.",
+          "For the table at the end of the chapter. The author worked these out as decimals; the key prints them in the form of the house.",
         quantities: [
           threeJ(2, 2, 2, 1, -1, 0),
           threeJ(3, 2, 2, 1, 0, -1),

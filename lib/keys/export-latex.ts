@@ -33,7 +33,7 @@ export function keyAsLatex(content: KeyContent, sha256: string, made: Exported):
   return [
     comment(`${work.title}: answers, frozen key ${number}`),
     comment(
-      `frozen ${frozenAt} by ${frozenBy}; ${content.claims.length} answers; recomputed by Surdmark ${content.engine}`,
+      `frozen ${frozenAt} by ${frozenBy}; ${content.claims.length} answers; recomputed by ${content.engine}`,
     ),
     comment(`SHA-256 of the key's canonical JSON: ${sha256}`),
     comment(`exported ${made.at} by ${made.by}`),

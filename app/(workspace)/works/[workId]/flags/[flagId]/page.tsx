@@ -82,7 +82,7 @@ export default async function FlagPage(props: Props) {
       <Section
         title="Evidence"
         id="evidence"
-        aside={flag.proof?.evidence ? <>recomputed by Surdmark {flag.proof.evidence.version}</> : null}
+        aside={flag.proof?.evidence ? <>recomputed by {flag.proof.evidence.version}</> : null}
       >
         <Evidence flag={flag} />
       </Section>

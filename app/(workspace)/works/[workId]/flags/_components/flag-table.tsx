@@ -31,7 +31,7 @@ const columns = helper.columns([
   helper.display({ id: "place", header: "Claim", cell: ({ row }) => <Place row={row.original} /> }),
   helper.display({
     id: "values",
-    header: "As claimed, as recomputed",
+    header: () => <span className="inline-flex min-h-6 items-baseline">As claimed, as recomputed</span>,
     cell: ({ row }) => <Values row={row.original} />,
   }),
   helper.display({
@@ -121,7 +121,12 @@ export function FlagTable({
           {table.getRowModel().rows.map((row) => (
             <tr key={row.id} role="row" className="relative">
               {row.getAllCells().map((cell) => (
-                <Cell key={cell.id} rowHeader={cell.column.id === "place"} label={LABELS[cell.column.id]}>
+                <Cell
+                  key={cell.id}
+                  rowHeader={cell.column.id === "place"}
+                  label={LABELS[cell.column.id]}
+                  className="align-middle"
+                >
                   {cell.column.id === "place" ? (
                     <Place row={row.original} href={`${path}/${row.original.id}${here}`} />
                   ) : (

@@ -121,7 +121,7 @@ function Certificate({ view }: { view: KeyView }) {
               },
             ]
           : []),
-        { term: "Recomputed by", value: `Surdmark ${content.engine}, two routes` },
+        { term: "Recomputed by", value: `${content.engine}, two routes` },
         ...CONVENTION_CHOICES.map((choice) => ({
           term: CONVENTION_NAMES[choice.id],
           value:

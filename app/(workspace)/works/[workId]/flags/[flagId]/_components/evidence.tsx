@@ -17,7 +17,7 @@ export function Evidence({ flag }: { flag: FlagView }) {
   const { evidence, variants } = proof;
   const agreeing = variants?.filter(({ agrees }) => agrees).length ?? 0;
   return (
-    <div>
+    <div className="-mt-3 [&>details:first-child]:border-t-0">
       {evidence ? (
         <>
           <Disclosure summary={rulesInWords(evidence)} open={evidence.rules.some(({ holds }) => !holds)}>
