@@ -1,8 +1,7 @@
+import { readClaim } from "@/lib/claims/reading";
 import { readDetails, readSlips } from "@/lib/flags/finding-details";
 import { typeset } from "@/lib/typeset/typeset";
 import type { Conventions } from "@/lib/verify/conventions";
-import { readQuantity } from "@/lib/verify/read-quantity";
-import { readValue } from "@/lib/verify/read-value";
 import type { Chapter, Claim, Finding, Flag, Settlement, User } from "@/models";
 import type { SettleWord } from "@/models/settlement";
 
@@ -16,13 +15,6 @@ type Loaded = Flag & {
 
 const set = (latex: string | null) => (latex === null ? null : typeset(latex, { own: true }));
 
-/** A finding keeps a reading only when both sides could be read; here the one side that can is printed all the same. */
-function readAgain({ quantity, claimed }: Claim, conventions: Conventions) {
-  const left = readQuantity(quantity, conventions);
-  const right = readValue(claimed, conventions);
-  return { quantityLatex: left.ok ? left.latex : null, claimedLatex: right.ok ? right.latex : null };
-}
-
 /** One line of the queue: plain data with its formulas already typeset, for the page and for its refreshing. */
 export function toFlagRow(
   flag: Flag,
@@ -31,7 +23,9 @@ export function toFlagRow(
   conventions: Conventions,
 ) {
   const { chapter, claim, finding, claimant, assignee } = flag as Loaded;
-  const reading = readDetails(finding.details).reading ?? readAgain(claim, conventions);
+  // A finding keeps a reading only when both sides could be read; here the side that can is printed all the same.
+  const reading =
+    readDetails(finding.details).reading ?? readClaim(claim.quantity, claim.claimed, conventions);
   const first = readSlips(finding.slips)[0];
   const settled: SettleWord | null = active?.word ?? null;
   return {

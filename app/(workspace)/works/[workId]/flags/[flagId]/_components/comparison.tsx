@@ -12,6 +12,7 @@ import type { FlagView } from "@/lib/flags/get-flag";
 export function Comparison({ flag }: { flag: FlagView }) {
   const { exact, claimed, houseForm } = flag;
   const otherForm = houseForm && exact && houseForm.latex !== exact.latex ? houseForm.latex : null;
+  const relation = flag.slips[0]?.formulaLatex;
   return (
     <Sheet marks className="grid md:grid-cols-[minmax(0,1fr)_20rem]">
       <figure className="min-w-0 px-5 py-8 sm:px-9 sm:py-10" aria-label="The claim and its recomputation">
@@ -44,6 +45,16 @@ export function Comparison({ flag }: { flag: FlagView }) {
             </p>
           )}
         </div>
+        {relation ? (
+          <div className="mt-8 border-t border-rule pt-4">
+            <p className="font-ui text-xs text-red">
+              {flag.slips[0]?.certainty === "likely"
+                ? "How the one becomes the other"
+                : "How the one may become the other"}
+            </p>
+            <Math own display wide align="start" latex={relation} className="text-lg" />
+          </div>
+        ) : null}
         {flag.errors.length > 0 ? <ReadingErrors flag={flag} /> : null}
         {otherForm ? (
           <p className="mt-6 text-quiet">
@@ -126,11 +137,6 @@ function Diagnosis({ flag }: { flag: FlagView }) {
         title={first.certainty === "likely" ? "Likely so" : "Possibly so"}
       >
         <p>{first.says}</p>
-        {first.formulaLatex ? (
-          <div className="mt-3 overflow-x-auto text-ink">
-            <Math own display wide align="start" latex={first.formulaLatex} />
-          </div>
-        ) : null}
         <p className="mt-2 font-ui text-xs not-italic">slip: {first.names.join(", or ")}</p>
       </MarginNote>
       {others.length > 0 ? (

@@ -13,7 +13,7 @@ export function Orbit({ flag }: { flag: FlagView }) {
   if (total === 0) return null;
   return (
     <Section
-      title="The same value under a symmetry"
+      title="Joined to it by a symmetry"
       id="orbit"
       aside={total === 1 ? "one other claim of this work" : `${total} other claims of this work`}
     >
