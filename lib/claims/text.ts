@@ -2,7 +2,6 @@ import { z } from "zod";
 
 /** Characters that a page would act on instead of showing: text direction is turned by them unseen. */
 const DIRECTION = /[\u200e\u200f\u061c\u202a-\u202e\u2066-\u2069]/;
-// eslint-disable-next-line no-control-regex -- these are the characters that are refused
 const CONTROL = /[\u0000-\u0008\u000b\u000c\u000e-\u001f\u007f-\u009f]/;
 const HALF_CHARACTER = /\p{Cs}/u;
 

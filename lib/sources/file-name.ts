@@ -1,7 +1,6 @@
 import { AppError } from "@/lib/errors";
 import { SOURCE_LIMITS } from "./limits";
 
-// eslint-disable-next-line no-control-regex -- these are the characters that are taken out
 const UNSEEN = /[\u0000-\u001f\u007f-\u009f\u200b-\u200f\u061c\u2028-\u202e\u2060-\u2069\ufeff]/g;
 
 /**

@@ -116,7 +116,7 @@ export function ClaimForm({ workId, conventions, target, initial, onDone, onCanc
       aria-label={target.kind === "new" ? "New claim" : `Claim ${initial.ref}`}
       className="grid gap-4 border-y border-blue bg-sheet py-5"
     >
-      <ErrorSummary key={attempt} items={summary} />
+      <ErrorSummary key={`summary-${attempt}`} items={summary} />
       {stored ? (
         <ClaimConflict
           stored={stored}
@@ -161,7 +161,7 @@ export function ClaimForm({ workId, conventions, target, initial, onDone, onCanc
         />
       </div>
       <ClaimCheck
-        key={sheet.key}
+        key={`check-${sheet.key}`}
         id={id}
         conventions={conventions}
         initial={{ quantity: sheet.quantity, claimed: sheet.claimed }}

@@ -116,13 +116,16 @@ function ClaimText({ workId, claim }: { workId: string; claim: GalleyClaim }) {
   return (
     <>
       <div className="flex flex-wrap items-center gap-x-5 gap-y-1">
-        <Link
-          href={`/works/${workId}/claims/${claim.id}`}
-          className="link tabular inline-flex min-h-8 min-w-14 shrink-0 items-center font-ui text-sm"
-        >
-          <span className="sr-only">Claim </span>
-          {claim.ref}
-        </Link>
+        <div className="w-16 shrink-0 font-ui">
+          <Link
+            href={`/works/${workId}/claims/${claim.id}`}
+            className="link tabular inline-flex min-h-6 items-center text-sm break-all"
+          >
+            <span className="sr-only">Claim </span>
+            {claim.ref}
+          </Link>
+          {claim.page ? <p className="text-xs leading-tight text-quiet">page {claim.page}</p> : null}
+        </div>
         <TypesetClaim
           quantity={claim.quantity}
           claimed={claim.claimed}
@@ -137,13 +140,7 @@ function ClaimText({ workId, claim }: { workId: string; claim: GalleyClaim }) {
           {error.says}
         </p>
       ) : null}
-      {claim.note || claim.page ? (
-        <p className="mt-1 text-sm text-blue italic">
-          {claim.note}
-          {claim.note && claim.page ? " · " : ""}
-          {claim.page ? <span className="not-italic">page {claim.page}</span> : null}
-        </p>
-      ) : null}
+      {claim.note ? <p className="mt-1 text-sm text-blue italic">{claim.note}</p> : null}
     </>
   );
 }
