@@ -42,7 +42,7 @@ export default async function AdminPeoplePage({ searchParams }: PageProps<"/admi
                 id: "email",
                 header: "Address",
                 rowHeader: true,
-                cell: (row) => <span className="break-all">{row.email}</span>,
+                cell: (row) => <span className="inline-block max-w-72 break-words">{row.email}</span>,
               },
               {
                 id: "role",
@@ -92,7 +92,7 @@ export default async function AdminPeoplePage({ searchParams }: PageProps<"/admi
                 </span>
               ),
             },
-            { id: "email", header: "Address", cell: (row) => <span className="break-all">{row.email}</span> },
+            { id: "email", header: "Address", cell: (row) => <span className="inline-block max-w-72 break-words">{row.email}</span> },
             { id: "since", header: "Since", cell: (row) => <Time at={row.createdAt} /> },
             {
               id: "used",

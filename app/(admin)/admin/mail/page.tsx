@@ -107,7 +107,7 @@ export default async function AdminMailPage() {
               id: "to",
               header: "To",
               rowHeader: true,
-              cell: (row) => <span className="break-all">{row.to}</span>,
+              cell: (row) => <span className="inline-block max-w-72 break-words">{row.to}</span>,
             },
             { id: "template", header: "Mail", cell: (row) => row.template },
             {

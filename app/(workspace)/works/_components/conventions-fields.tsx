@@ -28,7 +28,7 @@ export function ConventionsFields({
           key={id}
           legend={question}
           hint={help}
-          columns={options.length > 1 ? 2 : 1}
+          columns={options.length % 2 === 0 ? 2 : 1}
           error={errors?.[id]}
           options={options.map((option) => ({
             value: option.value,

@@ -53,7 +53,7 @@ function Members({ view }: { view: PeopleView }) {
                 {
                   id: "email",
                   header: "Address",
-                  cell: (row: MemberView) => <span className="break-all">{row.email}</span>,
+                  cell: (row: MemberView) => <span className="inline-block max-w-72 break-words">{row.email}</span>,
                 },
               ]
             : []),
@@ -131,7 +131,7 @@ function Invitations({ view: { work, invitations, chapters } }: { view: PeopleVi
             id: "email",
             header: "Address",
             rowHeader: true,
-            cell: (row) => <span className="break-all">{row.email}</span>,
+            cell: (row) => <span className="inline-block max-w-72 break-words">{row.email}</span>,
           },
           {
             id: "role",
