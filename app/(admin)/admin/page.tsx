@@ -92,7 +92,11 @@ export default async function AdminPeoplePage({ searchParams }: PageProps<"/admi
                 </span>
               ),
             },
-            { id: "email", header: "Address", cell: (row) => <span className="inline-block max-w-72 break-words">{row.email}</span> },
+            {
+              id: "email",
+              header: "Address",
+              cell: (row) => <span className="inline-block max-w-72 break-words">{row.email}</span>,
+            },
             { id: "since", header: "Since", cell: (row) => <Time at={row.createdAt} /> },
             {
               id: "used",

@@ -53,7 +53,9 @@ function Members({ view }: { view: PeopleView }) {
                 {
                   id: "email",
                   header: "Address",
-                  cell: (row: MemberView) => <span className="inline-block max-w-72 break-words">{row.email}</span>,
+                  cell: (row: MemberView) => (
+                    <span className="inline-block max-w-72 break-words">{row.email}</span>
+                  ),
                 },
               ]
             : []),
