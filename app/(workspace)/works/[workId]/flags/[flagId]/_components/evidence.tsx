@@ -110,15 +110,9 @@ function Rules({ evidence, zero }: { evidence: Kept; zero: string[] }) {
 }
 
 function Steps({ evidence }: { evidence: Kept }) {
-  const { prefactor, steps, value, sign } = evidence;
+  const { steps, value, sign } = evidence;
   return (
     <div className="grid gap-3">
-      {prefactor.primes.length > 0 ? (
-        <div>
-          <p className="font-ui text-sm text-quiet">Under the root, in primes</p>
-          <Math own display wide align="start" latex={prefactor.latex} />
-        </div>
-      ) : null}
       {sign ? (
         <p>
           The sign is (−1)<sup>{sign.exponent}</sup> = {sign.value === 1 ? "+1" : "−1"}.
