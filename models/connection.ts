@@ -10,11 +10,11 @@ export function connect(): Sequelize {
     dialect: "mariadb",
     logging: false,
     timezone: "+00:00",
-    pool: { max: 12, min: 0, acquire: 5_000, idle: 10_000 },
+    pool: { max: 12, min: 0, acquire: 5_000, idle: 60_000 },
     dialectOptions: {
       supportBigNumbers: true,
       bigNumberStrings: true,
-      connectTimeout: 3_000,
+      connectTimeout: 4_500,
       charset: "utf8mb4",
     },
     define: { underscored: true, charset: "utf8mb4", collate: "utf8mb4_unicode_ci" },
