@@ -38,7 +38,7 @@ const REASON = {
 
 /** The four words, what each does, and what it asks for. Whatever goes wrong, what was typed stays in the form. */
 export function SettleForm(view: SettleView) {
-  const { workId, flagId, version, correctionHtml, claimant, ref, next } = view;
+  const { workId, flagId, version, correctionHtml, claimant, claimRef, next } = view;
   const router = useRouter();
   const say = useToast();
   const [conflict, setConflict] = useState<Conflict | null>(null);
@@ -57,7 +57,7 @@ export function SettleForm(view: SettleView) {
       // The version that is on the screen now: a refresh after a conflict brings the new one.
       const result = await settleFlagAction({ ...values, version });
       if (result.ok) {
-        say(`${ref} is settled: ${values.word}.`);
+        say(`${claimRef} is settled: ${values.word}.`);
         router.push(next);
         return;
       }
@@ -95,7 +95,7 @@ export function SettleForm(view: SettleView) {
       <ErrorSummary key={attempt} items={summary} title="This was not settled yet" />
       {conflict ? <ConflictNotice conflict={conflict} words={() => typed(form.getValues())} /> : null}
       <RadioCards
-        legend={`How should ${ref} be settled?`}
+        legend={`How should ${claimRef} be settled?`}
         columns={2}
         error={errors.word}
         options={[

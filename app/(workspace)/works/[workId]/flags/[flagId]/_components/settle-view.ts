@@ -8,7 +8,7 @@ export function settleForm(flag: FlagView, next: string) {
     workId: flag.work.id,
     flagId: flag.id,
     version: flag.version,
-    ref: flag.claim.ref,
+    claimRef: flag.claim.ref, // not `ref`: React keeps that name for itself
     claimant: flag.claimant.name,
     correctionHtml: printed === null ? null : typeset(printed, { own: true }),
     maySettle: flag.may.settle,
