@@ -78,7 +78,6 @@ function escape(text: string): string {
     "\t": "&#9;",
     "\r": "&#13;",
   };
-  // eslint-disable-next-line no-control-regex -- these are the characters that XML 1.0 cannot hold
   const forbidden =
     /[\u0000-\u0008\u000b\u000c\u000e-\u001f\ufffe\uffff]|[\ud800-\udbff](?![\udc00-\udfff])|(?<![\ud800-\udbff])[\udc00-\udfff]/g;
   return text

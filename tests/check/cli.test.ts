@@ -28,7 +28,7 @@ function check(...args: string[]): Promise<{ code: number; out: string; err: str
     execFile(
       process.execPath,
       ["--import", "tsx", "scripts/check.ts", ...args],
-      { cwd: root, env: { PATH: process.env.PATH }, maxBuffer: 32 * 1024 * 1024 },
+      { cwd: root, env: { PATH: process.env.PATH, NODE_ENV: "production" }, maxBuffer: 32 * 1024 * 1024 },
       (error, out, err) => resolve({ code: error ? Number(error.code) : 0, out, err }),
     );
   });

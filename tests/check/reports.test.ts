@@ -103,7 +103,6 @@ describe("JUnit", () => {
 
 describe("text and JSON", () => {
   it("let no control character through to a terminal", () => {
-    // eslint-disable-next-line no-control-regex -- these are what must not come through
     expect(textReport(checkFiles(key(["\u001b[31m7.1,(1 1 2; 0 0 0),1"])))).not.toMatch(/\u001b/);
   });
   it("hold nothing but the contract", () => {
