@@ -1,3 +1,4 @@
+import { plainKey } from "@/lib/keys/plain-key";
 import type { Conventions } from "@/lib/verify/conventions";
 import { placeOf } from "./decode";
 import { escapePointer, scanJson, type JsonPlaces } from "./json-scan";
@@ -7,12 +8,12 @@ import { keySchema, type KeyInput } from "./key-schema";
 export type JsonKey = { key: KeyInput | null; errors: KeyFileError[]; places: JsonPlaces };
 
 /**
- * A JSON key checked against its contract; each error with its JSON Pointer, line and column.
+ * A JSON key checked against its contract, or the JSON of a frozen key; each error with its JSON Pointer, line and column.
  * @throws UnusableFile when the text is not well-formed JSON, nests too deep, or repeats a key
  */
 export function parseKey(text: string, mostClaims: number): JsonKey {
   const places = scanJson(text);
-  const parsed = keySchema(mostClaims).safeParse(JSON.parse(text));
+  const parsed = keySchema(mostClaims).safeParse(plainKey(JSON.parse(text)));
   const errors = parsed.success
     ? []
     : parsed.error.issues.map((issue) => {

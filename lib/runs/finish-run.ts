@@ -40,7 +40,9 @@ async function noteContradictions(run: Run, transaction: Transaction): Promise<n
   const keys = await doubtfulOrbits(run, transaction);
   const own = await ownEntries(run.id, keys, transaction);
   const others = await otherEntries(run, keys, new Set(own.map(({ claimId }) => claimId)), transaction);
-  const clashes = contradictions([...own, ...others]);
+  // Named in the order of the work: the same sentence however the rows came.
+  const inOrder = [...own, ...others].toSorted((a, b) => a.ref.localeCompare(b.ref, "en", { numeric: true }));
+  const clashes = contradictions(inOrder);
   let changed = 0;
   for (const { id, claimId, verdict, reason } of own.toSorted((a, b) => (a.claimId < b.claimId ? -1 : 1))) {
     const clash = clashes.get(id);

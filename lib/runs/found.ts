@@ -44,12 +44,21 @@ export async function foundSince(
     limit: MOST_FOUND,
   });
   const fresh = findings.filter(({ id }) => !skip.has(id));
+  // A claim that an earlier run found wrong has its flag from then.
   const flags = await Flag.findAll({
-    attributes: ["id", "findingId"],
-    where: { findingId: fresh.map(({ id }) => id) },
+    attributes: ["id", "findingId", "claimId"],
+    where: {
+      [Op.or]: [
+        { findingId: fresh.map(({ id }) => id) },
+        { openClaimId: fresh.map(({ claimId }) => claimId) },
+      ],
+    },
+    order: [["createdAt", "ASC"]],
   });
-  const flagOf = new Map(flags.map((flag) => [flag.findingId, flag.id]));
-  return fresh.map((finding) => view(finding as Finding & { claim: Claim }, flagOf.get(finding.id) ?? null));
+  const flagOf = new Map(flags.map((flag) => [flag.claimId, flag.id]));
+  return fresh.map((finding) =>
+    view(finding as Finding & { claim: Claim }, flagOf.get(finding.claimId) ?? null),
+  );
 }
 
 type Details = { reading?: { quantityLatex: string; claimedLatex: string } | null } | null;

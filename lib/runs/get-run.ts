@@ -30,7 +30,7 @@ export type RunView = {
   /** empty when the run is too large to draw */
   strips: RunStrip[];
   found: Found[];
-  /** flags of this run that still wait */
+  /** flags that wait in the chapter, or the work; an earlier run may have raised them for claims that are still the same */
   openFlags: number;
   /** up to when this picture was complete: the stream goes on from here */
   seenUpTo: string;
@@ -49,7 +49,9 @@ export async function getRun(which: ThisRun, user: SessionUser): Promise<RunView
     runProgress(run),
     run.total <= LARGEST_STRIP ? stripsOf(run.id) : [],
     foundSince(run.id, null, new Set()),
-    Flag.count({ where: { runId: run.id, state: "open" } }),
+    Flag.count({
+      where: { workId: run.workId, state: "open", ...(run.chapterId && { chapterId: run.chapterId }) },
+    }),
   ]);
   const person = { userId: user.id, isAdmin: user.isAdmin, role: access.role, chapterIds: access.chapterIds };
   const subject = { chapterId: run.chapterId };

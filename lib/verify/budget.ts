@@ -22,6 +22,8 @@ export const BUDGET = {
   digitsOfEntry: 7,
   /** Largest doubled j for which slips are looked for by trying other elements. */
   diagnosedTwice: 120,
+  /** Largest doubled entry for which every symmetry-related symbol is recomputed. */
+  variantsTwice: 60,
   /** Longest printed value (characters) from which misprints are imagined. */
   misprintText: 60,
 } as const;

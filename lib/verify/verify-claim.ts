@@ -1,10 +1,11 @@
 import { divide, isZero, type Exact } from "@/lib/symbols/exact";
 import { toDecimal, toDecimalPlaces, toLatex, toText } from "@/lib/symbols/exact-print";
-import { TooCostly } from "@/lib/symbols/failures";
+import { RouteDisagreement, TooCostly } from "@/lib/symbols/failures";
 import {
   checked,
   orbit,
   quantityText,
+  variants,
   whyZero,
   type Quantity,
   type VanishingReason,
@@ -33,8 +34,9 @@ export type VerifyOptions = {
 const DIGITS = 20;
 
 /**
- * Reads one claim, recomputes it by two routes, compares exactly, and says what is wrong and how it came to be wrong.
- * @throws RouteDisagreement when the two routes differ: an alarm about this program, never a verdict
+ * Reads one claim, recomputes it by two routes and its symmetry-related symbols each by itself, compares exactly, and says
+ * what is wrong and how it came to be wrong.
+ * @throws RouteDisagreement when routes or symmetries differ: an alarm about this program, never a verdict
  */
 export function verifyClaim(
   claim: ClaimText,
@@ -117,11 +119,31 @@ function compute(quantity: Quantity, options: VerifyOptions): { value: Exact } |
     };
   }
   try {
-    return { value: checked(quantity).value };
+    const { value } = checked(quantity);
+    checkVariants(quantity, value);
+    return { value };
   } catch (error) {
     if (error instanceof TooCostly) return { tooCostly: error.message };
     throw error;
   }
+}
+
+/**
+ * Recomputes every symmetry-related symbol directly and compares it through its phase, while the entries are small.
+ * @throws RouteDisagreement naming the first symmetry that does not hold
+ */
+function checkVariants(quantity: Quantity, value: Exact): void {
+  if (quantity.args.some((entry) => Math.abs(entry) > BUDGET.variantsTwice)) return;
+  const odd = variants(quantity).find((variant) => !variant.agrees);
+  if (!odd) return;
+  throw new RouteDisagreement(
+    quantityText(quantity, "j1m1j2m2"),
+    [
+      { name: "directly", text: toText(value) },
+      { name: `through “${odd.name}”`, text: toText(odd.value) },
+    ],
+    ENGINE_VERSION,
+  );
 }
 
 function printed(value: Exact): { text: string; latex: string; decimal: string } {

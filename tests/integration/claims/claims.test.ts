@@ -1,3 +1,4 @@
+import type { Options } from "sequelize";
 import { beforeAll, describe, expect, it } from "vitest";
 import type { SessionUser } from "@/lib/auth/user";
 import { addClaim } from "@/lib/claims/add-claim";
@@ -278,14 +279,14 @@ describe("withdrawing, restoring and ordering", () => {
     await move(2, "earlier");
     expect(await order()).toBe("acb");
     expect(await move(0, "earlier")).toEqual({ moved: false });
-    const before = (await Claim.findByPk(ids[0], { rejectOnEmpty: true })).version;
+    const before = (await Claim.findByPk(ids[0] ?? "", { rejectOnEmpty: true })).version;
     await Promise.all([move(0, "later"), move(1, "earlier"), move(2, "later")]);
     expect((await order()).split("").sort().join("")).toBe("abc");
     const places = (
       await Claim.findAll({ where: { problemId: problem.id }, order: [["position", "ASC"]] })
     ).map(({ position }) => position);
     expect(places).toEqual([0, 1, 2]);
-    expect((await Claim.findByPk(ids[0], { rejectOnEmpty: true })).version).toBe(before);
+    expect((await Claim.findByPk(ids[0] ?? "", { rejectOnEmpty: true })).version).toBe(before);
   });
 });
 
@@ -357,9 +358,10 @@ describe("reading", () => {
     await buildFlag({ claimId: made[30]?.id ?? "" });
     const { sequelize } = await import("@/models");
     let queries = 0;
-    sequelize.options.logging = () => void (queries += 1);
+    const settings = (sequelize as unknown as { options: Options }).options; // there, though the types leave it out
+    settings.logging = () => void (queries += 1);
     const first = await getGalley(own.id, many.id, lead);
-    sequelize.options.logging = false;
+    settings.logging = false;
     expect(queries).toBeLessThan(16);
     expect([first.pages, first.strip.length, first.unchecked, first.problems.length]).toEqual([
       2, 100, 99, 2,

@@ -11,7 +11,6 @@ import { freezeKey } from "@/lib/keys/freeze-key";
 import { getKey } from "@/lib/keys/get-key";
 import { canonicalJson, type KeyClaim, type KeyContent } from "@/lib/keys/key-content";
 import { listKeys } from "@/lib/keys/list-keys";
-import { plainKey } from "@/lib/keys/plain-key";
 import { KEY_FORMATS, KeyNumber } from "@/lib/keys/schema";
 import { typeset } from "@/lib/typeset/typeset";
 import { DEFAULT_CONVENTIONS } from "@/lib/verify/conventions";
@@ -97,7 +96,7 @@ describe("downloads", () => {
     } = JSON.parse(body) as KeyContent & { sha256: string; export: { by: string } };
     expect(createHash("sha256").update(canonicalJson(content)).digest("hex")).toBe(sha256);
     expect(made.by).toBe(stage.production.name);
-    const file = readKeyFile("key.json", bytes(JSON.stringify(plainKey(JSON.parse(body)))));
+    const file = readKeyFile("key.json", bytes(body));
     expect(file.errors).toEqual([]);
     const { summary } = verifyKey({ conventions: file.conventions ?? {}, claims: file.rows });
     expect(summary).toMatchObject({ total: 6, confirmed: 6 });

@@ -12,7 +12,16 @@ import { handleFlagDigest } from "@/lib/mail/flag-digest";
 import { handleMail } from "@/lib/mail/mail-handler";
 import { postDigest } from "@/lib/flags/raise-flags";
 import { transact } from "@/lib/transact";
-import { asUser, buildAdmin, buildChapter, buildClaim, buildFlag, buildMember, buildUser, buildWork } from "../../factories";
+import {
+  asUser,
+  buildAdmin,
+  buildChapter,
+  buildClaim,
+  buildFlag,
+  buildMember,
+  buildUser,
+  buildWork,
+} from "../../factories";
 
 const received: ParsedMail[] = [];
 let refusing = false;

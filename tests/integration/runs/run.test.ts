@@ -55,7 +55,9 @@ it("refuses a second run beside the first, also when both start at once", async 
   const scene = await buildScene();
   await writeClaims(scene, manyClaims(3));
   const whole = { workId: scene.workId, chapterId: null };
-  const tries = await Promise.allSettled([scene, scene, whole, scene, whole].map((what) => startRun(what, scene.lead)));
+  const tries = await Promise.allSettled(
+    [scene, scene, whole, scene, whole].map((what) => startRun(what, scene.lead)),
+  );
   const started = tries.flatMap((each) => (each.status === "fulfilled" ? [each.value.runId] : []));
   expect(started).toHaveLength(1);
   for (const each of tries.filter(({ status }) => status === "rejected"))
@@ -68,7 +70,10 @@ it("refuses a second run beside the first, also when both start at once", async 
 
 it("says why a run cannot start", async () => {
   const scene = await buildScene();
-  await expect(startRun(scene, scene.lead)).rejects.toMatchObject({ code: "invalid", message: /no claim to check/ });
+  await expect(startRun(scene, scene.lead)).rejects.toMatchObject({
+    code: "invalid",
+    message: /no claim to check/,
+  });
   const referee = await buildMember(await workOf(scene.workId), "referee");
   await expect(startRun(scene, referee)).rejects.toMatchObject({ code: "forbidden" });
   await expect(startRun(scene, asUser(await buildUser()))).rejects.toMatchObject({ code: "not_found" });
@@ -91,7 +96,10 @@ it("judges the version that the run was started with, and leaves a newer one unj
   });
   await Claim.update({ current: 2, claimed: "sqrt(30)/15" }, { where: { id: claimId } });
   await workOff();
-  expect(await Finding.findOne({ where: { runId } })).toMatchObject({ claimVersion: 1, verdict: "discrepant" });
+  expect(await Finding.findOne({ where: { runId } })).toMatchObject({
+    claimVersion: 1,
+    verdict: "discrepant",
+  });
   expect(await Claim.findByPk(claimId)).toMatchObject({ verdict: null, findingId: null });
   expect(await Flag.count({ where: { runId } })).toBe(0);
 });
@@ -108,7 +116,9 @@ it("stops when it is cancelled, and raises no flags", async () => {
   expect(await Finding.count({ where: { runId, verdict: { [Op.not]: null } } })).toBe(50);
   expect(await Flag.count({ where: { runId } })).toBe(0);
   expect(await Outbox.count({ where: { state: "pending", kind: ["run-batch", "run-finish"] } })).toBe(0);
-  await expect(cancelRun({ workId: scene.workId, runId }, scene.lead)).rejects.toMatchObject({ code: "conflict" });
+  await expect(cancelRun({ workId: scene.workId, runId }, scene.lead)).rejects.toMatchObject({
+    code: "conflict",
+  });
   expect(await AuditEvent.count({ where: { subjectId: runId, action: "run.cancel" } })).toBe(1);
 });
 
@@ -137,7 +147,10 @@ it("leaves a claim that fells its worker undecided, and judges all others", asyn
   await poison.update({ attempts: 3 });
   await workOff();
   await poison.reload();
-  expect(poison).toMatchObject({ verdict: "undecided", reason: expect.stringMatching(/begun 3 times/) as string });
+  expect(poison).toMatchObject({
+    verdict: "undecided",
+    reason: expect.stringMatching(/begun 3 times/) as string,
+  });
   expect(await stateOf(runId)).toBe("ended");
   const others = await Finding.findAll({ where: { runId, id: { [Op.ne]: poison.id } } });
   expect(others.every(({ verdict }) => verdict !== null && verdict !== "undecided")).toBe(true);
@@ -146,7 +159,12 @@ it("leaves a claim that fells its worker undecided, and judges all others", asyn
 it("ends a claim that takes too long or dies, and goes on with the next", async () => {
   const script = new URL("./hostile-thread.mjs", import.meta.url);
   const hostile = openVerifier({ script, claimMs: 1_500 });
-  const tasks = ["fine", "hang", "fine", "die", "fine"].map((ref, i) => ({ id: `${i}`, ref, quantity: "", claimed: "" }));
+  const tasks = ["fine", "hang", "fine", "die", "fine"].map((ref, i) => ({
+    id: `${i}`,
+    ref,
+    quantity: "",
+    claimed: "",
+  }));
   const results = await hostile.verify(tasks, {} as never);
   await hostile.close();
   expect(results.map(({ id, kind }) => `${id} ${kind}`)).toEqual([
@@ -179,14 +197,18 @@ it("shows a run to those who may read its chapter, and to nobody else", async ()
   const which = { workId: scene.workId, runId };
   const inside = await buildMember(work, "referee", { chapterIds: [scene.chapterId] });
   await expect(getRun(which, inside)).resolves.toMatchObject({ id: runId, may: { cancel: false } });
-  const outside = await buildMember(work, "referee", { chapterIds: [(await buildChapter({ workId: work.id })).id] });
+  const outside = await buildMember(work, "referee", {
+    chapterIds: [(await buildChapter({ workId: work.id })).id],
+  });
   for (const user of [outside, await buildMember(work, "production"), asUser(await buildUser())]) {
     await expect(getRun(which, user)).rejects.toMatchObject({ code: "not_found" });
     await expect(cancelRun(which, user)).rejects.toMatchObject({ code: "not_found" });
   }
   expect((await listRuns(work.id, outside)).runs).toEqual([]);
   const elsewhere = await buildWork();
-  await expect(getRun({ workId: elsewhere.id, runId }, scene.lead)).rejects.toMatchObject({ code: "not_found" });
+  await expect(getRun({ workId: elsewhere.id, runId }, scene.lead)).rejects.toMatchObject({
+    code: "not_found",
+  });
 });
 
 const FREE = { id: "none", attempt: 1, done: () => Promise.resolve(), goOn: () => undefined };

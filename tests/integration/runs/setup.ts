@@ -17,7 +17,12 @@ export type Scene = { workId: string; chapterId: string; lead: SessionUser; auth
 export async function buildScene(): Promise<Scene> {
   const work = await buildWork({ title: "Angular momentum" });
   const chapter = await buildChapter({ workId: work.id });
-  return { workId: work.id, chapterId: chapter.id, lead: await leadOf(work), author: await buildMember(work, "author") };
+  return {
+    workId: work.id,
+    chapterId: chapter.id,
+    lead: await leadOf(work),
+    author: await buildMember(work, "author"),
+  };
 }
 
 export type Written = { quantity: string; claimed: string };
@@ -70,7 +75,11 @@ function* manySymbols(): Generator<Quantity> {
       for (let c = a - b; c <= a + b; c += 2)
         for (let x = -a; x <= a; x += 2)
           for (let y = -b; y <= b; y += 2)
-            if (Math.abs(x + y) <= c) yield quantity("3j", [a, b, c, x, y, -x - y].map((n) => n as Twice));
+            if (Math.abs(x + y) <= c)
+              yield quantity(
+                "3j",
+                [a, b, c, x, y, -x - y].map((n) => n as Twice),
+              );
 }
 
 /** One thread for a test file: starting one takes longer than most tests. */
@@ -97,7 +106,29 @@ export async function saidIn(runId: string): Promise<string[]> {
     order: [["claimId", "ASC"]],
   });
   return findings.map((finding) => {
-    const { verdict, exactText, exactLatex, exactDecimal, slips, reason, details, evidence, orbitKey, claimId } = finding;
-    return JSON.stringify([claimId, verdict, exactText, exactLatex, exactDecimal, slips, reason, details, evidence, orbitKey]);
+    const {
+      verdict,
+      exactText,
+      exactLatex,
+      exactDecimal,
+      slips,
+      reason,
+      details,
+      evidence,
+      orbitKey,
+      claimId,
+    } = finding;
+    return JSON.stringify([
+      claimId,
+      verdict,
+      exactText,
+      exactLatex,
+      exactDecimal,
+      slips,
+      reason,
+      details,
+      evidence,
+      orbitKey,
+    ]);
   });
 }

@@ -97,7 +97,7 @@ function Note({ workId, found: { verdict, exactHtml, says, flagId } }: { workId:
   return (
     <MarginNote pencil="red" mark={verdict} title={VERDICTS[verdict].word}>
       {verdict !== "unreadable" && exactHtml !== null ? (
-        <p>
+        <p className="py-1 text-lg">
           <MathHtml html={exactHtml} label="recomputed value" />
         </p>
       ) : null}

@@ -162,7 +162,11 @@ export function Acceptance({
   );
 }
 
-function advice({ rows, refused, broken, unreadable, nothing }: Counts, good: number, chapterNumber: number): string {
+function advice(
+  { rows, refused, broken, unreadable, nothing }: Counts,
+  good: number,
+  chapterNumber: number,
+): string {
   if (rows === 0) return "There is nothing in this file that could be accepted.";
   if (good === 0 && unreadable === 0)
     return nothing === rows
