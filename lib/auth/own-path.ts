@@ -4,7 +4,6 @@
  */
 export function ownPath(wanted: unknown, fallback = "/desk"): string {
   if (typeof wanted !== "string" || wanted.length > 500) return fallback;
-  // eslint-disable-next-line no-control-regex -- browsers drop these characters before they read an address
   if (!/^\/(?![/\\])/.test(wanted) || /[\\\u0000-\u0020\u007f]/.test(wanted)) return fallback;
   const base = "https://own.invalid";
   const url = URL.canParse(wanted, base) ? new URL(wanted, base) : null;

@@ -1,4 +1,4 @@
-import { randomUUID } from "node:crypto";
+import { createHash, randomUUID } from "node:crypto";
 import { Op } from "sequelize";
 import { afterAll } from "vitest";
 import { Chapter, Claim, ClaimVersion, Finding, Run } from "@/models";
@@ -102,33 +102,22 @@ export const judgedIn = (runId: string) => Finding.count({ where: { runId, verdi
 export async function saidIn(runId: string): Promise<string[]> {
   const findings = await Finding.findAll({
     where: { runId },
-    include: [{ model: Claim, as: "claim", attributes: ["ref"] }],
     order: [["claimId", "ASC"]],
   });
   return findings.map((finding) => {
     const {
+      claimId,
       verdict,
+      reason,
       exactText,
       exactLatex,
       exactDecimal,
       slips,
-      reason,
       details,
       evidence,
       orbitKey,
-      claimId,
     } = finding;
-    return JSON.stringify([
-      claimId,
-      verdict,
-      exactText,
-      exactLatex,
-      exactDecimal,
-      slips,
-      reason,
-      details,
-      evidence,
-      orbitKey,
-    ]);
+    const rest = JSON.stringify([exactText, exactLatex, exactDecimal, slips, details, evidence, orbitKey]);
+    return `${claimId} ${verdict}: ${reason} ${createHash("sha256").update(rest).digest("hex")}`;
   });
 }

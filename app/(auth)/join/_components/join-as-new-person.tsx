@@ -26,10 +26,10 @@ export function JoinAsNewPerson({ token, email }: { token: string; email: string
       const fields = Object.entries(result.fields ?? {}).flatMap(([field, said]) =>
         said.map((message) => ({ field, message })),
       );
-      return setRefusal({
-        at: Date.now(),
+      return setRefusal((last) => ({
+        at: (last?.at ?? 0) + 1,
         items: fields.length > 0 ? fields : [{ message: result.message }],
-      });
+      }));
     }
     const signedIn = await signInHere({ email: result.data.email, password: given.password });
     window.location.assign(

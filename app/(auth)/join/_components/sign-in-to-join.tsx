@@ -21,7 +21,7 @@ export function SignInToJoin({ token, email }: { token: string; email: string })
     setRefusal(null);
     const signedIn = await signInHere({ email, password });
     const result = signedIn.ok ? await acceptSignedInAction({ token }) : signedIn;
-    if (!result.ok) return setRefusal({ at: Date.now(), message: result.message });
+    if (!result.ok) return setRefusal((last) => ({ at: (last?.at ?? 0) + 1, message: result.message }));
     if ("data" in result) window.location.assign(result.data.path);
   });
   return (

@@ -27,7 +27,7 @@ export function SignInForm({ next, demo }: { next: string; demo: readonly DemoPe
     setRefusal(null);
     const outcome = await signInHere(given);
     if (outcome.ok) return window.location.assign(next);
-    setRefusal({ at: Date.now(), message: outcome.message });
+    setRefusal((last) => ({ at: (last?.at ?? 0) + 1, message: outcome.message }));
     form.resetField("password");
   });
   return (
