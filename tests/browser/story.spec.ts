@@ -58,7 +58,7 @@ test("a chapter goes from a form and a file to a frozen key", async ({ browser }
       await lead.goto(`${work}/people`);
       await lead.getByLabel("E-mail address").fill(person.email);
       await lead.getByRole("radio", { name: new RegExp(`^${role}`, "i") }).check({ force: true });
-      await lead.getByRole("button", { name: "Send the invitation" }).click();
+      await lead.getByRole("button", { name: "Send the invitation", exact: true }).click();
       await expect(lead.getByText(person.email).first()).toBeVisible();
     }
   });
