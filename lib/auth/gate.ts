@@ -1,5 +1,6 @@
 import { Op, type Transaction, type WhereOptions } from "sequelize";
 import { AppError, notFound } from "@/lib/errors";
+import { isId } from "@/lib/ids";
 import { Membership, Work } from "@/models";
 import { can, type Action, type Role, type Subject } from "./permissions";
 
@@ -34,6 +35,7 @@ export async function gate(
   subject: Subject = {},
   transaction?: Transaction,
 ): Promise<Access> {
+  if (!isId(workId)) throw notFound();
   const member = await Membership.findOne({
     where: { workId, userId: user.id },
     transaction: transaction ?? null,

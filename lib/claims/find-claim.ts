@@ -2,6 +2,7 @@ import type { Transaction } from "sequelize";
 import { gate, visibleChapters, type Access } from "@/lib/auth/gate";
 import type { SessionUser } from "@/lib/auth/user";
 import { AppError, notFound } from "@/lib/errors";
+import { isId } from "@/lib/ids";
 import { Claim, User } from "@/models";
 
 /**
@@ -14,6 +15,7 @@ export async function findClaim(
   user: SessionUser,
 ): Promise<{ claim: Claim; access: Access }> {
   const access = await gate(user, "chapter.read", workId);
+  if (!isId(claimId)) throw notFound();
   const claim = await Claim.findOne({ where: { id: claimId, workId, ...visibleChapters(access) } });
   if (!claim) throw notFound();
   return { claim, access };

@@ -3,6 +3,7 @@ import { gate } from "@/lib/auth/gate";
 import { can } from "@/lib/auth/permissions";
 import type { SessionUser } from "@/lib/auth/user";
 import { notFound } from "@/lib/errors";
+import { isId } from "@/lib/ids";
 import { conventionsAt } from "@/lib/flags/conventions-at";
 import type { Conventions } from "@/lib/verify/conventions";
 import { Chapter, Claim, Finding, Flag, Problem, Run, User } from "@/models";
@@ -77,6 +78,7 @@ export async function getGalley(
   wanted: number | { claimId: string } = 1,
 ): Promise<Galley> {
   const access = await gate(user, "chapter.read", workId, { chapterId });
+  if (!isId(chapterId)) throw notFound();
   const chapter = await Chapter.findOne({ where: { id: chapterId, workId } });
   if (!chapter) throw notFound();
   const [conventions, problems, light, lastRun] = await Promise.all([

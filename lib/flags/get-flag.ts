@@ -4,6 +4,7 @@ import { gate, visibleChapters, type Access } from "@/lib/auth/gate";
 import { can } from "@/lib/auth/permissions";
 import type { SessionUser } from "@/lib/auth/user";
 import { notFound } from "@/lib/errors";
+import { isId } from "@/lib/ids";
 import { readDetails, readSlips } from "@/lib/flags/finding-details";
 import { flagHistory } from "@/lib/flags/flag-history";
 import type { FlagQuery } from "@/lib/flags/flag-query";
@@ -45,6 +46,7 @@ type Loaded = Flag & {
  */
 export async function getFlag(workId: string, flagId: string, query: FlagQuery, user: SessionUser) {
   const access = await gate(user, "flag.read", workId);
+  if (!isId(flagId)) throw notFound();
   const flag = (await Flag.findOne({
     where: { id: flagId, workId, ...visibleChapters(access) },
     include: [

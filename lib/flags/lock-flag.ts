@@ -4,6 +4,7 @@ import { gate, visibleChapters, type Access } from "@/lib/auth/gate";
 import type { Action } from "@/lib/auth/permissions";
 import type { SessionUser } from "@/lib/auth/user";
 import { AppError, notFound } from "@/lib/errors";
+import { isId } from "@/lib/ids";
 import { Claim, Flag, Settlement, User } from "@/models";
 
 /**
@@ -12,6 +13,7 @@ import { Claim, Flag, Settlement, User } from "@/models";
  */
 export async function findFlag(workId: string, flagId: string, user: SessionUser): Promise<Flag> {
   const access = await gate(user, "flag.read", workId);
+  if (!isId(flagId)) throw notFound();
   const flag = await Flag.findOne({ where: { id: flagId, workId, ...visibleChapters(access) } });
   if (!flag) throw notFound();
   return flag;

@@ -2,6 +2,7 @@ import type { Transaction } from "sequelize";
 import { Chapter, Run } from "@/models";
 import { gate, type Access } from "@/lib/auth/gate";
 import { notFound } from "@/lib/errors";
+import { isId } from "@/lib/ids";
 import { isGoing } from "./going";
 import type { ThisRun } from "./schema";
 
@@ -17,6 +18,7 @@ export async function readRun(
   user: { id: string; isAdmin?: boolean },
   transaction?: Transaction,
 ): Promise<ReadRun> {
+  if (!isId(workId) || !isId(runId)) throw notFound();
   const run = await Run.findOne({ where: { id: runId, workId }, transaction: transaction ?? null });
   const access = await gate(user, "chapter.read", workId, { chapterId: run?.chapterId ?? null }, transaction);
   if (!run || (run.chapterId === null && access.chapterIds !== null)) throw notFound();

@@ -2,6 +2,7 @@ import { gate, type Access } from "@/lib/auth/gate";
 import { can } from "@/lib/auth/permissions";
 import type { SessionUser } from "@/lib/auth/user";
 import { notFound } from "@/lib/errors";
+import { isId } from "@/lib/ids";
 import { Source } from "@/models";
 
 /**
@@ -15,6 +16,7 @@ export async function findSource(
   user: SessionUser,
 ): Promise<{ source: Source; access: Access }> {
   const access = await gate(user, "chapter.read", workId);
+  if (!isId(sourceId)) throw notFound();
   const source = await Source.findOne({
     attributes: { exclude: ["bytes"] },
     where: { id: sourceId, workId },

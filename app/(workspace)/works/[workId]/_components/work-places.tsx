@@ -6,7 +6,7 @@ import { useSelectedLayoutSegment } from "next/navigation";
 export type WorkPlace = { segment: string | null; href: string; label: string };
 
 /** Pages that hang below the chapters: their place in the head is "chapters". */
-const UNDER_CHAPTERS = ["chapters", "claims", "sources", "runs"];
+const UNDER_CHAPTERS = ["(overview)", "chapters", "claims", "sources", "runs"];
 
 /** The parts of a work, with the one that is open underlined. */
 export function WorkPlaces({ places }: { places: readonly WorkPlace[] }) {

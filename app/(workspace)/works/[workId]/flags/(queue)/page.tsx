@@ -5,8 +5,8 @@ import { orNotFound } from "@/lib/action";
 import { requireUser } from "@/lib/auth/session";
 import { readFlagQuery } from "@/lib/flags/flag-query";
 import { listFlagFilters, listFlags } from "@/lib/flags/list-flags";
-import { FlagFilters } from "./_components/flag-filters";
-import { FlagTable } from "./_components/flag-table";
+import { FlagFilters } from "../_components/flag-filters";
+import { FlagTable } from "../_components/flag-table";
 
 export const metadata: Metadata = { title: "Review queue" };
 

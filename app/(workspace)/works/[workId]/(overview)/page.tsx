@@ -9,10 +9,10 @@ import { requireUser } from "@/lib/auth/session";
 import { getOverview, type Overview } from "@/lib/works/get-overview";
 import { getWork, type WorkChrome } from "@/lib/works/get-work";
 import { KIND_WORDS } from "@/lib/works/schema";
-import { AddChapter } from "./_components/add-chapter";
-import { ChapterLine } from "./_components/chapter-line";
-import { ProductionPage } from "./_components/production-page";
-import { WorkSettings } from "./_components/work-settings";
+import { AddChapter } from "../_components/add-chapter";
+import { ChapterLine } from "../_components/chapter-line";
+import { ProductionPage } from "../_components/production-page";
+import { WorkSettings } from "../_components/work-settings";
 
 export async function generateMetadata({ params }: PageProps<"/works/[workId]">): Promise<Metadata> {
   const user = await requireUser();

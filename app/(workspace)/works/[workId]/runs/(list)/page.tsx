@@ -13,8 +13,8 @@ import { orNotFound } from "@/lib/action";
 import { requireUser } from "@/lib/auth/session";
 import { notFound } from "@/lib/errors";
 import { listRuns, type RunLine, type RunList } from "@/lib/runs/list-runs";
-import { StartRunButton } from "./_components/start-run-button";
-import { number, RUN_STATES, wrongOf } from "./_components/words";
+import { StartRunButton } from "../_components/start-run-button";
+import { number, RUN_STATES, wrongOf } from "../_components/words";
 
 type Props = PageProps<"/works/[workId]/runs">;
 

@@ -9,8 +9,8 @@ import { CAUTIONS } from "@/components/words";
 import { orNotFound } from "@/lib/action";
 import { requireUser } from "@/lib/auth/session";
 import { listKeys, type KeyLine } from "@/lib/keys/list-keys";
-import { FreezePanel } from "./_components/freeze-panel";
-import { PreflightList } from "./_components/preflight-list";
+import { FreezePanel } from "../_components/freeze-panel";
+import { PreflightList } from "../_components/preflight-list";
 
 export const metadata: Metadata = { title: "Keys" };
 
