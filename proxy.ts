@@ -16,6 +16,8 @@ export function proxy(request: NextRequest): NextResponse {
   // Next reads the nonce from the policy on the request and puts it on its own scripts.
   headers.set("content-security-policy", policy);
   headers.set("x-nonce", nonce);
+  // Where somebody signed out wanted to go: a page cannot see its own address.
+  headers.set("x-surdmark-path", request.nextUrl.pathname + request.nextUrl.search);
   const response = NextResponse.next({ request: { headers } });
   response.headers.set("content-security-policy", policy);
   if (secure) response.headers.set("strict-transport-security", "max-age=63072000; includeSubDomains");
