@@ -17,8 +17,10 @@ type Shared = { label: ReactNode; hint?: ReactNode; error?: FieldError; optional
 
 const BOX =
   "w-full rounded-sm border border-edge bg-sheet px-3 font-ui text-base text-ink placeholder:text-quiet " +
-  "hover:border-ink aria-[invalid=true]:border-red aria-[invalid=true]:bg-red-wash disabled:bg-sunk disabled:text-quiet " +
-  "read-only:bg-sunk";
+  "hover:border-ink aria-[invalid=true]:border-red aria-[invalid=true]:bg-red-wash disabled:bg-sunk disabled:text-quiet";
+
+/** Text that can be read only. Not for lists: to CSS a <select> is always read-only. */
+const TEXT_BOX = `${BOX} read-only:bg-sunk`;
 
 /** Ties the label, the hint and the error of one control together by id; the control is given by `children(props)`. */
 export function FieldShell({
@@ -94,7 +96,7 @@ export function Field({
   const own = useId();
   return (
     <FieldShell {...{ label, hint, error, optional, className }} id={id ?? own}>
-      {(tie) => <input type="text" className={cx(BOX, "h-11", inputClassName)} {...input} {...tie} />}
+      {(tie) => <input type="text" className={cx(TEXT_BOX, "h-11", inputClassName)} {...input} {...tie} />}
     </FieldShell>
   );
 }
@@ -114,7 +116,12 @@ export function TextArea({
   return (
     <FieldShell {...{ label, hint, error, optional, className }} id={id ?? own}>
       {(tie) => (
-        <textarea rows={4} className={cx(BOX, "py-2 leading-relaxed", inputClassName)} {...input} {...tie} />
+        <textarea
+          rows={4}
+          className={cx(TEXT_BOX, "py-2 leading-relaxed", inputClassName)}
+          {...input}
+          {...tie}
+        />
       )}
     </FieldShell>
   );
