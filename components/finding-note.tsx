@@ -20,6 +20,9 @@ export function FindingNote({
 }) {
   const { word, tone } = VERDICTS[finding.verdict];
   const differs = finding.verdict === "discrepant" || finding.verdict === "contradicted";
+  const sentence = html.slips.length === 0 && finding.errors.length === 0 ? finding.reason : null;
+  // The sentence of a vanishing claim may have its rules in it already; nothing is said twice.
+  const vanishes = finding.zero.filter(({ says }) => !sentence?.includes(says.replace(/\.$/, "")));
   return (
     <div className={cx("grid gap-3", className)}>
       <p className={cx("flex items-center gap-2.5 text-lg leading-tight", TONE_TEXT[tone])}>
@@ -64,10 +67,8 @@ export function FindingNote({
             </li>
           ))}
         </ul>
-      ) : finding.errors.length === 0 ? (
-        <p className={cx("text-base leading-snug italic", differs ? "text-red" : "text-ink")}>
-          {finding.reason}
-        </p>
+      ) : sentence ? (
+        <p className={cx("text-base leading-snug italic", differs ? "text-red" : "text-ink")}>{sentence}</p>
       ) : null}
 
       {finding.rightUnder ? (
@@ -77,11 +78,13 @@ export function FindingNote({
         </div>
       ) : null}
 
-      {finding.zero.length > 0 ? (
+      {vanishes.length > 0 ? (
         <div className="text-base leading-snug">
-          <p className="font-ui text-xs text-quiet">why it vanishes</p>
+          <p className="font-ui text-xs text-quiet">
+            {vanishes.length < finding.zero.length ? "it vanishes also because" : "why it vanishes"}
+          </p>
           <ul className="italic">
-            {finding.zero.map((reason) => (
+            {vanishes.map((reason) => (
               <li key={reason.says}>{reason.says}</li>
             ))}
           </ul>
