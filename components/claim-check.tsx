@@ -56,14 +56,16 @@ export function ClaimCheck({
   const cgOrder = conventions?.cgOrder ?? "j1m1j2m2";
   const [claim, setClaim] = useState(initial);
   const [way, setWay] = useState<Way>(() => wayOf(initial.quantity));
+  const valued = claim.claimed.trim() !== "";
   const { answer, stale, failure, retry } = useCheck(
     claim,
-    // A symbol with empty cells is not asked about: it is being typed.
-    claim.claimed.trim() !== "" &&
-      (way === "line" ? claim.quantity.trim() !== "" : cellsOf(way, claim.quantity) !== null),
+    // A symbol with empty cells is not asked about: it is being typed. A line is shown as read before it has a value.
+    way === "line" ? claim.quantity.trim() !== "" : valued && cellsOf(way, claim.quantity) !== null,
     conventions,
     initialAnswer,
-    onReading,
+    (read) => {
+      if (read.finding.claimed.trim() !== "") onReading?.(read);
+    },
   );
 
   function put(change: Partial<Claim>) {
@@ -72,7 +74,7 @@ export function ClaimCheck({
     onChange?.(next);
   }
 
-  const finding = answer?.finding ?? null;
+  const finding = valued ? (answer?.finding ?? null) : null;
   const fresh = finding !== null && !stale;
   const fault = (field: "quantity" | "claimed") =>
     fresh ? finding.errors.find((error) => error.field === field) : undefined;
@@ -228,7 +230,7 @@ export function ClaimCheck({
                 <figcaption className="font-ui text-xs text-quiet">as it is read</figcaption>
                 <div className="mt-1 overflow-x-auto py-1 text-xl">
                   <MathHtml html={answer.html.quantity} />
-                  {answer.html.claimed ? (
+                  {valued && answer.html.claimed ? (
                     <>
                       {" = "}
                       <span className="text-blue">
@@ -264,13 +266,11 @@ export function ClaimCheck({
             />
           ) : (
             <p className="text-base text-quiet italic">
-              {stale
+              {stale && valued
                 ? "Reading…"
-                : way === "line"
-                  ? claim.quantity.trim() === ""
-                  : cellsOf(way, claim.quantity) === null
-                    ? "Fill in the symbol as it is printed."
-                    : "Now write the value that the key claims for it."}
+                : (way === "line" ? claim.quantity.trim() === "" : cellsOf(way, claim.quantity) === null)
+                  ? "Fill in the symbol as it is printed."
+                  : "Now write the value that the key claims for it."}
             </p>
           )}
           <p role="status" className="sr-only">
@@ -278,7 +278,7 @@ export function ClaimCheck({
           </p>
         </div>
       </div>
-      {answer?.evidence && !stale ? (
+      {answer?.evidence && valued && !stale ? (
         <Disclosure summary="Evidence, to be redone by hand" className="mt-2">
           <EvidenceSheet evidence={answer.evidence} html={answer.html.evidence} />
         </Disclosure>

@@ -4,6 +4,7 @@ import { withoutHoles } from "@/lib/key-files/json";
 import { TooCostly } from "@/lib/symbols/failures";
 import { evidence, type Evidence } from "@/lib/symbols/quantity";
 import { findingView, type FindingView } from "@/lib/typeset/finding-view";
+import { typeset } from "@/lib/typeset/typeset";
 import { BUDGET } from "@/lib/verify/budget";
 import { DEFAULT_CONVENTIONS, type Conventions } from "@/lib/verify/conventions";
 import type { Finding } from "@/lib/verify/finding";
@@ -40,7 +41,10 @@ export function answerClaim({
     finding.verdict === "undecided" && finding.errors.length === 0
       ? `${finding.reason} A run of the chapter works out larger ones.`
       : finding.reason;
-  return findingView({ ...finding, reason }, evidenceFor(finding, conventions));
+  const view = findingView({ ...finding, reason }, evidenceFor(finding, conventions));
+  // The quantity is shown as read even while its value cannot be: it may not be written yet.
+  const read = finding.reading ? null : readQuantity(quantity, conventions);
+  return read?.ok ? { ...view, html: { ...view.html, quantity: typeset(read.latex, { own: true }) } } : view;
 }
 
 function evidenceFor(finding: Finding, conventions: Conventions): Evidence | null {

@@ -3,6 +3,7 @@ import { act, cleanup, fireEvent, render, screen } from "@testing-library/react"
 import { afterEach, beforeEach, describe, expect, it, vi } from "vitest";
 
 import { ClaimCheck } from "@/components/claim-check";
+import { answerClaim } from "@/lib/check/answer-claim";
 import { findingView } from "@/lib/typeset/finding-view";
 import { DEFAULT_CONVENTIONS } from "@/lib/verify/conventions";
 import { verifyClaim } from "@/lib/verify/verify-claim";
@@ -27,7 +28,7 @@ function network(_: string, init: RequestInit): Promise<Response> {
       quantity,
       claimed,
       signal: init.signal as AbortSignal,
-      answer: () => json(200, findingView(verifyClaim({ ref: "x", quantity, claimed }, DEFAULT_CONVENTIONS))),
+      answer: () => json(200, answerClaim({ quantity, claimed })),
       fail: (status, detail) => json(status, { status, detail }),
       cut: () => reject(new TypeError("fetch failed")),
     });
@@ -79,6 +80,32 @@ describe("checking while typing", () => {
     await pause(2_000);
     expect(asked).toHaveLength(0);
     expect(screen.getByText("Now write the value that the key claims for it.")).toBeTruthy();
+  });
+
+  it("sets a typed line as it is read before a value is written, and gives no verdict yet", async () => {
+    const seen: string[] = [];
+    render(<ClaimCheck onReading={({ finding }) => seen.push(finding.verdict)} />);
+    fireEvent.click(screen.getByRole("radio", { name: "typed line" }));
+    fireEvent.change(screen.getByRole("textbox", { name: "Quantity" }), {
+      target: { value: "(1 1 2; 0 0 0)" },
+    });
+    await pause();
+    await answered(0);
+    expect(screen.getByText("as it is read")).toBeTruthy();
+    expect(document.querySelectorAll("figure math")).toHaveLength(1);
+    expect(verdict()).toBe("");
+    expect(value().getAttribute("aria-invalid")).toBeNull();
+    expect(seen).toEqual([]);
+  });
+
+  it("says once why a value vanishes", async () => {
+    render(<ClaimCheck initial={{ quantity: "(1 1 1; 0 0 0)", claimed: "" }} />);
+    write("0");
+    await pause();
+    await answered(0);
+    expect(
+      document.querySelector(".galley-notes .grid")?.textContent?.split("its own negative"),
+    ).toHaveLength(2);
   });
 
   it("drops the answer to an older question", async () => {
