@@ -1,5 +1,5 @@
 import { randomUUID } from "node:crypto";
-import type { Transaction } from "sequelize";
+import type { CreationAttributes, Transaction } from "sequelize";
 import { Claim, Finding, Run } from "@/models";
 import { audit } from "@/lib/audit";
 import { log } from "@/lib/log";
@@ -22,6 +22,19 @@ type Filled = {
   orbitKey: string | null;
 };
 
+const FILLED: (keyof Filled | "judgedAt")[] = [
+  "verdict",
+  "exactText",
+  "exactLatex",
+  "exactDecimal",
+  "slips",
+  "reason",
+  "details",
+  "evidence",
+  "orbitKey",
+  "judgedAt",
+];
+
 /** What a TEXT column takes. */
 const MOST_TEXT = 60_000;
 
@@ -41,22 +54,52 @@ export async function fillFindings(
     lock: transaction.LOCK.SHARE,
   });
   if (!run || !isGoing(run.state)) return false;
-  // Everybody who changes several claims takes them in the order of their ids.
-  for (const { empty, result } of pairs.toSorted((a, b) => (a.empty.claimId < b.empty.claimId ? -1 : 1))) {
-    const filled = fill(result);
-    const [written] = await Finding.update(
-      { ...filled, judgedAt: new Date() },
-      { where: { id: empty.id, verdict: null }, transaction },
-    );
-    if (written === 0) continue;
-    await Claim.update(
-      { verdict: filled.verdict, findingId: empty.id, orbitKey: filled.orbitKey },
-      { where: { id: empty.claimId, current: empty.claimVersion }, silent: true, transaction },
-    );
-    if (result.kind === "alarm") await raiseAlarm(empty, result.says, transaction);
-    if (result.kind === "failed") log.error({ claimId: empty.claimId, fault: result.says }, "a check broke");
+  const resultOf = new Map(pairs.map(({ empty, result }) => [empty.id, result]));
+  const rows = await Finding.findAll({
+    where: { id: [...resultOf.keys()], verdict: null },
+    order: [["id", "ASC"]],
+    lock: transaction.LOCK.UPDATE,
+    transaction,
+    raw: true,
+  });
+  if (rows.length === 0) return true;
+  const written = rows.map((row) => {
+    const result = resultOf.get(row.id) ?? { kind: "failed" as const, id: row.id, says: "no result" };
+    return { ...row, ...fill(result), judgedAt: new Date(), result };
+  });
+  // One statement for all of them: the rows are there and locked, so each is changed and none is added.
+  await Finding.bulkCreate(written as CreationAttributes<Finding>[], {
+    updateOnDuplicate: FILLED,
+    transaction,
+  });
+  await markClaims(written, transaction);
+  for (const { id, workId, claimId, result } of written) {
+    if (result.kind === "alarm") await raiseAlarm({ id, workId, claimId }, result.says, transaction);
+    if (result.kind === "failed") log.error({ claimId, fault: result.says }, "a check broke");
   }
   return true;
+}
+
+type Judged = Pick<Finding, "id" | "claimId" | "claimVersion" | "verdict" | "orbitKey">;
+
+/** Claims carry the verdict on their current version. They are locked in the order of their ids, as by everybody else. */
+async function markClaims(judged: Judged[], transaction: Transaction): Promise<void> {
+  const findingOf = new Map(judged.map((finding) => [finding.claimId, finding]));
+  const claims = await Claim.findAll({
+    where: { id: [...findingOf.keys()] },
+    order: [["id", "ASC"]],
+    lock: transaction.LOCK.UPDATE,
+    transaction,
+    raw: true,
+  });
+  const marked = claims.flatMap((claim) => {
+    const finding = findingOf.get(claim.id);
+    if (!finding || finding.claimVersion !== claim.current) return [];
+    const { verdict, orbitKey, id: findingId } = finding;
+    return [{ ...claim, verdict, orbitKey, findingId } as CreationAttributes<Claim>];
+  });
+  if (marked.length === 0) return;
+  await Claim.bulkCreate(marked, { updateOnDuplicate: ["verdict", "orbitKey", "findingId"], transaction });
 }
 
 function fill(result: Result): Filled {
@@ -98,14 +141,18 @@ function reasonFor(result: Exclude<Result, { kind: "judged" }>): string {
 }
 
 /** Two routes that disagree are the gravest thing the program can find out about itself. */
-async function raiseAlarm(empty: Empty, says: string, transaction: Transaction): Promise<void> {
+async function raiseAlarm(
+  finding: { id: string; workId: string; claimId: string },
+  says: string,
+  transaction: Transaction,
+): Promise<void> {
   const reference = randomUUID().slice(0, 8);
-  log.fatal({ claimId: empty.claimId, fault: says, reference }, "two routes disagree");
+  log.fatal({ claimId: finding.claimId, fault: says, reference }, "two routes disagree");
   await audit(transaction, {
-    workId: empty.workId,
+    workId: finding.workId,
     action: "engine.disagree",
     subjectType: "finding",
-    subjectId: empty.id,
+    subjectId: finding.id,
     after: { reference, says },
   });
 }

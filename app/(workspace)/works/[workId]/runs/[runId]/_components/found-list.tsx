@@ -48,12 +48,20 @@ export function FoundList({
   );
 }
 
-function Nothing({ going, progress: { counts, done } }: { going: boolean; progress: RunProgress }) {
+function Nothing({ going, progress: { counts, done, total } }: { going: boolean; progress: RunProgress }) {
   if (going)
     return (
       <p className="py-6 text-quiet">
         Nothing so far. Whatever needs a second author appears here as it is found.
       </p>
+    );
+  if (done < total)
+    return (
+      <EmptyState title="Nothing was found before it was cancelled" mark="pending">
+        {done === 0
+          ? "No claim had been judged by then."
+          : "The claims that it had judged by then need no second author."}
+      </EmptyState>
     );
   const right = counts.confirmed + counts["confirmed-not-house-form"];
   return (
