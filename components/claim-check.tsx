@@ -16,6 +16,7 @@ import { FieldMessage } from "@/components/ui/field";
 import { Notice } from "@/components/ui/notice";
 import { useCheck, type Claim } from "@/components/use-check";
 import { VERDICTS } from "@/components/words";
+import { ScrollBox } from "@/components/ui/scroll-box";
 import type { Conventions } from "@/lib/verify/conventions";
 
 type Way = SymbolKind | "line";
@@ -228,7 +229,7 @@ export function ClaimCheck({
             {answer?.html.quantity ? (
               <figure className={cx("transition-opacity", stale && "opacity-45")}>
                 <figcaption className="font-ui text-xs text-quiet">as it is read</figcaption>
-                <div className="mt-1 overflow-x-auto py-1 text-xl">
+                <ScrollBox label="the claim as it is read" className="block mt-1 py-1 text-xl">
                   <MathHtml html={answer.html.quantity} />
                   {valued && answer.html.claimed ? (
                     <>
@@ -238,7 +239,7 @@ export function ClaimCheck({
                       </span>
                     </>
                   ) : null}
-                </div>
+                </ScrollBox>
               </figure>
             ) : null}
           </div>

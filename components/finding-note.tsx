@@ -3,6 +3,7 @@ import type { ShownFinding } from "@/components/check-answer";
 import { Mark } from "@/components/marks";
 import { MathHtml } from "@/components/math-html";
 import { TONE_TEXT, VERDICTS } from "@/components/words";
+import { ScrollBox } from "@/components/ui/scroll-box";
 import type { FindingHtml } from "@/lib/typeset/finding-view";
 
 /**
@@ -60,9 +61,12 @@ export function FindingNote({
               </span>
               <p className="italic">{slip.says}</p>
               {slip.formula ? (
-                <p className="mt-1.5 overflow-x-auto py-1 text-sm text-ink">
+                <ScrollBox
+                  label="the relation between both values"
+                  className="block mt-1.5 py-1 text-sm text-ink"
+                >
                   <MathHtml html={slip.formula} />
-                </p>
+                </ScrollBox>
               ) : null}
             </li>
           ))}

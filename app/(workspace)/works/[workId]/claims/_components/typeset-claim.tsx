@@ -1,5 +1,6 @@
 import { cx } from "@/components/cx";
 import { Math } from "@/components/math";
+import { ScrollBox } from "@/components/ui/scroll-box";
 import type { ClaimReading } from "@/lib/claims/reading";
 
 /**
@@ -20,9 +21,10 @@ export function TypesetClaim({
   className?: string;
 }) {
   return (
-    <span
+    <ScrollBox
+      label="the claim"
       className={cx(
-        "inline-flex max-w-full flex-wrap items-center gap-x-2 gap-y-1 overflow-x-auto py-0.5",
+        "inline-flex flex-wrap items-center gap-x-2 gap-y-1 py-0.5",
         struck && "line-through",
         className,
       )}
@@ -32,7 +34,7 @@ export function TypesetClaim({
       <span className="text-blue">
         <Side latex={reading.claimedLatex} text={claimed} />
       </span>
-    </span>
+    </ScrollBox>
   );
 }
 

@@ -18,6 +18,7 @@ import { Pager } from "@/components/ui/pager";
 import { Cell, ColumnHead, TableFrame } from "@/components/ui/table";
 import { Time } from "@/components/ui/time";
 import { SettleMark, VerdictMark } from "@/components/verdict-mark";
+import { ScrollBox } from "@/components/ui/scroll-box";
 import { FLAGS_PER_PAGE, flagQueryText, isNarrowed, type FlagQuery } from "@/lib/flags/flag-query";
 import type { FlagRow } from "@/lib/flags/flag-row";
 import type { FlagList } from "@/lib/flags/list-flags";
@@ -174,7 +175,10 @@ function Place({ row, href }: { row: FlagRow; href?: string }) {
 /** The symbol with the author's value in blue and, under it on the same axis, the recomputed one in red. */
 function Values({ row }: { row: FlagRow }) {
   return (
-    <div className="grid w-fit max-w-full grid-cols-[auto_auto_minmax(0,auto)] items-center gap-x-2.5 overflow-x-auto font-work">
+    <ScrollBox
+      label="claimed and recomputed"
+      className="grid w-fit grid-cols-[auto_auto_minmax(0,auto)] items-center gap-x-2.5 font-work"
+    >
       <span className="row-span-2">
         {row.quantityHtml ? (
           <MathHtml html={row.quantityHtml} />
@@ -204,7 +208,7 @@ function Values({ row }: { row: FlagRow }) {
           <span className="font-ui text-xs">nothing recomputed</span>
         )}
       </span>
-    </div>
+    </ScrollBox>
   );
 }
 

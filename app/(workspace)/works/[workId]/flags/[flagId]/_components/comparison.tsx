@@ -3,6 +3,7 @@ import { Math } from "@/components/math";
 import { Sheet } from "@/components/ui/page";
 import { MarginNote } from "@/components/ui/galley";
 import { VERDICTS } from "@/components/words";
+import { ScrollBox } from "@/components/ui/scroll-box";
 import type { FlagView } from "@/lib/flags/get-flag";
 
 /**
@@ -17,13 +18,13 @@ export function Comparison({ flag }: { flag: FlagView }) {
     <Sheet marks className="grid md:grid-cols-[minmax(0,1fr)_20rem]">
       <figure className="min-w-0 px-5 py-8 sm:px-9 sm:py-10" aria-label="The claim and its recomputation">
         <div className="grid min-w-0 gap-x-5 gap-y-6 lg:grid-cols-[auto_minmax(0,1fr)] lg:items-center">
-          <div className="min-w-0 overflow-x-auto text-2xl sm:text-3xl lg:row-span-2">
+          <ScrollBox label="the quantity" className="block min-w-0 text-2xl sm:text-3xl lg:row-span-2">
             {flag.quantity.latex ? (
               <Math own latex={flag.quantity.latex} />
             ) : (
               <code className="font-mono text-lg break-all">{flag.quantity.text}</code>
             )}
-          </div>
+          </ScrollBox>
           <ValueLine
             pencil="blue"
             label={`as claimed by ${flag.claimant.name}`}
@@ -91,9 +92,9 @@ function ValueLine({
         =
       </span>
       <div className="flex min-w-0 flex-wrap items-center justify-between gap-x-6 gap-y-1">
-        <div className="min-w-0 overflow-x-auto py-1 text-2xl sm:text-3xl">
+        <ScrollBox label="the value" className="block min-w-0 py-1 text-2xl sm:text-3xl">
           {latex ? <Math own latex={latex} /> : <code className="font-mono text-lg break-all">{typed}</code>}
-        </div>
+        </ScrollBox>
         <div className="text-right font-ui text-xs leading-snug">
           {decimal ? (
             <span className="tabular block text-base whitespace-pre">{aligned(decimal)}</span>
@@ -147,9 +148,9 @@ function Diagnosis({ flag }: { flag: FlagView }) {
               <li key={slip.says} className="text-red">
                 <span className="italic">{slip.says}</span>
                 {slip.formulaLatex ? (
-                  <span className="mt-1 block overflow-x-auto text-ink">
+                  <ScrollBox label="the relation between both values" className="mt-1 block text-ink">
                     <Math own latex={slip.formulaLatex} />
-                  </span>
+                  </ScrollBox>
                 ) : null}
               </li>
             ))}
@@ -168,7 +169,11 @@ function ReadingErrors({ flag }: { flag: FlagView }) {
         const text = error.field === "quantity" ? flag.quantity.text : flag.claimed.text;
         return (
           <div key={`${error.field}${error.at}`}>
-            <pre className="overflow-x-auto font-mono text-sm leading-snug">
+            <pre
+              tabIndex={0}
+              aria-label="as it was typed"
+              className="overflow-x-auto font-mono text-sm leading-snug"
+            >
               {text}
               {"\n"}
               <span className="text-red" aria-hidden="true">

@@ -3,6 +3,7 @@ import Link from "next/link";
 import { Math } from "@/components/math";
 import { Section } from "@/components/ui/page";
 import { VerdictMark } from "@/components/verdict-mark";
+import { ScrollBox } from "@/components/ui/scroll-box";
 import type { FlagView } from "@/lib/flags/get-flag";
 
 type Shown = { text: string; latex: string | null };
@@ -27,13 +28,13 @@ export function Orbit({ flag }: { flag: FlagView }) {
               <Link href={`/works/${flag.work.id}/claims/${claim.id}`} className="link font-work">
                 {claim.ref}
               </Link>
-              <span className="mt-1 block overflow-x-auto">
+              <ScrollBox label="the claim" className="mt-1 block">
                 <Printed of={claim.quantity} />
                 <span className="text-blue">
                   {" = "}
                   <Printed of={claim.claimed} />
                 </span>
-              </span>
+              </ScrollBox>
             </span>
             <VerdictMark verdict={claim.verdict} short />
           </li>

@@ -1,6 +1,7 @@
 import { Math } from "@/components/math";
 import { VerdictMark } from "@/components/verdict-mark";
 import { SettleMark } from "@/components/verdict-mark";
+import { ScrollBox } from "@/components/ui/scroll-box";
 import type { KeyClaim, KeyContent } from "@/lib/keys/key-content";
 
 /** The answers as they would stand at the back of the book: by chapter, in two columns where there is room. */
@@ -35,7 +36,7 @@ function Answer({ claim }: { claim: KeyClaim }) {
   return (
     <li className="grid break-inside-avoid grid-cols-[4.5rem_minmax(0,1fr)_auto] items-center gap-x-3 border-b border-rule py-2">
       <b className="old-style font-semibold break-words">{claim.ref}</b>
-      <span className="min-w-0 overflow-x-auto py-0.5">
+      <ScrollBox label="the answer" className="block min-w-0 py-0.5">
         {quantityLatex ? (
           <Math own latex={quantityLatex} />
         ) : (
@@ -47,7 +48,7 @@ function Answer({ claim }: { claim: KeyClaim }) {
         ) : (
           <code className="font-mono text-sm">{answer.text}</code>
         )}
-      </span>
+      </ScrollBox>
       {waiver ? (
         <a href="#settled" className="font-ui text-xs no-underline">
           <VerdictMark verdict="undecided" />

@@ -1,5 +1,6 @@
 import { Math } from "@/components/math";
 import { Section } from "@/components/ui/page";
+import { ScrollBox } from "@/components/ui/scroll-box";
 import type { KeyChanges } from "@/lib/keys/compare-keys";
 import type { KeyClaim } from "@/lib/keys/key-content";
 
@@ -18,7 +19,7 @@ export function Changes({ changes, previous }: { changes: KeyChanges; previous: 
             className="grid gap-x-6 border-b border-rule py-2.5 sm:grid-cols-[6rem_minmax(0,1fr)] sm:items-center"
           >
             <b className="old-style font-semibold">{after.ref}</b>
-            <span className="flex min-w-0 flex-wrap items-center gap-x-4 overflow-x-auto">
+            <ScrollBox label="before and after" className="flex min-w-0 flex-wrap items-center gap-x-4">
               <del className="text-quiet decoration-red">
                 <Printed claim={before} />
               </del>
@@ -26,7 +27,7 @@ export function Changes({ changes, previous }: { changes: KeyChanges; previous: 
               <ins className="no-underline">
                 <Printed claim={after} />
               </ins>
-            </span>
+            </ScrollBox>
           </li>
         ))}
       </ul>

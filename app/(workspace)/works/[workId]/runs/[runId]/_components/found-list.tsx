@@ -4,6 +4,7 @@ import { MathHtml } from "@/components/math-html";
 import { EmptyState } from "@/components/ui/empty-state";
 import { Galley, GalleyLine, MarginNote } from "@/components/ui/galley";
 import { VERDICTS } from "@/components/words";
+import { ScrollBox } from "@/components/ui/scroll-box";
 import type { Found } from "@/lib/runs/found";
 import type { RunProgress } from "@/lib/runs/run-progress";
 import { number, wrongOf } from "../../_components/words";
@@ -84,14 +85,14 @@ function Claim({ workId, found }: { workId: string; found: Found }) {
         {ref}
       </Link>
       {quantityHtml !== null && claimedHtml !== null ? (
-        <span className="flex min-w-0 flex-wrap items-center gap-x-2 overflow-x-auto">
+        <ScrollBox label="the claim" className="flex min-w-0 flex-wrap items-center gap-x-2">
           <MathHtml html={quantityHtml} />
           <span aria-hidden="true">=</span>
           <span className="sr-only">claimed to equal</span>
           <span className="text-blue">
             <MathHtml html={claimedHtml} />
           </span>
-        </span>
+        </ScrollBox>
       ) : (
         <span className="min-w-0 font-mono text-sm break-all">
           {quantity} = <span className="text-blue">{claimed}</span>
