@@ -222,8 +222,12 @@ test("a chapter goes from a form and a file to a frozen key", async ({ browser }
     for (const { ref } of key.rows) expect(bodies.csv!.includes(`${ref},`), ref).toBe(ref !== key.wrong[4]);
     expect(bodies.csv).toContain("4.1(a),");
     expect(bodies.latex).toContain("\\begin{");
-    for (const path of [chapter, `${work}/flags`, `${work}/people`])
+    for (const path of [chapter, `${work}/flags`, `${work}/runs`, `${work}/conventions`])
       expect((await production.goto(path))?.status(), path).toBe(404);
+    // Who is on the work is no secret to them; how to reach them is.
+    await production.goto(`${work}/people`);
+    await expect(production.getByText(AUTHOR.name).first()).toBeVisible();
+    expect(await production.content()).not.toContain(AUTHOR.email);
   });
 
   await test.step("a stranger gets 404 everywhere, the same as for what was never there", async () => {
