@@ -55,7 +55,8 @@ export function MarginNote({
   className?: string;
 }) {
   return (
-    <aside
+    <div
+      role="note"
       aria-label={pencil === "red" ? "Verifier's note" : "Author's note"}
       className={cx(
         "flex gap-2 text-sm leading-snug",
@@ -68,6 +69,6 @@ export function MarginNote({
         {title ? <p className="font-ui font-medium">{title}</p> : null}
         {children ? <div className="italic [&_.katex]:not-italic">{children}</div> : null}
       </div>
-    </aside>
+    </div>
   );
 }

@@ -25,7 +25,12 @@ export function ScrollBox({
   }, []);
   const reach = wide ? ({ tabIndex: 0, role: "group", "aria-label": label } as const) : {};
   return (
-    <span ref={box} className={`max-w-full overflow-x-auto ${className}`} {...reach} {...rest}>
+    <span
+      ref={box}
+      className={`max-w-full overflow-x-auto overflow-y-hidden ${className}`}
+      {...reach}
+      {...rest}
+    >
       {children}
     </span>
   );

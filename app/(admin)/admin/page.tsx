@@ -56,7 +56,7 @@ export default async function AdminPeoplePage({ searchParams }: PageProps<"/admi
               },
               {
                 id: "do",
-                header: "",
+                header: <span className="sr-only">What can be done</span>,
                 label: "",
                 cell: (row) => <SiteInvitationPresses invitationId={row.id} email={row.email} />,
               },
@@ -111,7 +111,7 @@ export default async function AdminPeoplePage({ searchParams }: PageProps<"/admi
             },
             {
               id: "do",
-              header: "",
+              header: <span className="sr-only">What can be done</span>,
               label: "",
               cell: (row) =>
                 row.isSelf ? (

@@ -84,7 +84,7 @@ export default async function AdminMailPage() {
               },
               {
                 id: "do",
-                header: "",
+                header: <span className="sr-only">What can be done</span>,
                 label: "",
                 cell: (row) =>
                   row.state === "dead" ? (

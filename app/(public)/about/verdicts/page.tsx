@@ -56,12 +56,12 @@ export default function VerdictsPage() {
         </h2>
         <dl className="grid gap-x-10 sm:grid-cols-2">
           {(Object.keys(SETTLE_WORDS) as SettleId[]).map((id) => (
-            <div key={id} className="flex gap-3 border-b border-rule py-3">
-              <Mark name={id} size={26} className="mt-0.5 text-blue" />
-              <div>
-                <dt className="text-blue italic">{SETTLE_WORDS[id].word}</dt>
-                <dd>{SETTLE_WORDS[id].means}</dd>
-              </div>
+            <div key={id} className="border-b border-rule py-3">
+              <dt className="flex items-center gap-3 text-blue italic">
+                <Mark name={id} size={26} />
+                {SETTLE_WORDS[id].word}
+              </dt>
+              <dd className="pl-9.5">{SETTLE_WORDS[id].means}</dd>
             </div>
           ))}
         </dl>

@@ -67,7 +67,7 @@ function Members({ view }: { view: PeopleView }) {
           { id: "since", header: "Since", cell: (row) => <Time at={row.since} /> },
           {
             id: "do",
-            header: "",
+            header: <span className="sr-only">What can be done</span>,
             label: "",
             cell: (row) =>
               mayManage || row.isSelf ? (
@@ -147,7 +147,7 @@ function Invitations({ view: { work, invitations, chapters } }: { view: PeopleVi
           },
           {
             id: "do",
-            header: "",
+            header: <span className="sr-only">What can be done</span>,
             label: "",
             cell: (row) => <InvitationPresses workId={work.id} invitationId={row.id} email={row.email} />,
           },

@@ -17,9 +17,9 @@ export function GalleyProblemBlock({ problem, ...shared }: Shared & { problem: G
   const { workId, conventions, mayEdit } = shared;
   const head = (
     <>
-      <h3 id={`problem-${problem.id}`} className="inline text-lg font-semibold">
+      <h2 id={`problem-${problem.id}`} className="inline text-lg font-semibold">
         {problem.label}
-      </h3>
+      </h2>
       {problem.continued ? (
         <span className="ml-3 text-quiet italic">continued</span>
       ) : problem.statement ? (

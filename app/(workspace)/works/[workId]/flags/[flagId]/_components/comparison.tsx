@@ -18,7 +18,7 @@ export function Comparison({ flag }: { flag: FlagView }) {
     <Sheet marks className="grid md:grid-cols-[minmax(0,1fr)_20rem]">
       <figure className="min-w-0 px-5 py-8 sm:px-9 sm:py-10" aria-label="The claim and its recomputation">
         <div className="grid min-w-0 gap-x-5 gap-y-6 lg:grid-cols-[auto_minmax(0,1fr)] lg:items-center">
-          <ScrollBox label="the quantity" className="block min-w-0 text-2xl sm:text-3xl lg:row-span-2">
+          <ScrollBox label="the quantity" className="block min-w-0 text-2xl sm:text-3xl lg:row-span-2 py-1">
             {flag.quantity.latex ? (
               <Math own latex={flag.quantity.latex} />
             ) : (
@@ -148,7 +148,7 @@ function Diagnosis({ flag }: { flag: FlagView }) {
               <li key={slip.says} className="text-red">
                 <span className="italic">{slip.says}</span>
                 {slip.formulaLatex ? (
-                  <ScrollBox label="the relation between both values" className="mt-1 block text-ink">
+                  <ScrollBox label="the relation between both values" className="mt-1 block text-ink py-1">
                     <Math own latex={slip.formulaLatex} />
                   </ScrollBox>
                 ) : null}

@@ -28,7 +28,7 @@ export function Orbit({ flag }: { flag: FlagView }) {
               <Link href={`/works/${flag.work.id}/claims/${claim.id}`} className="link font-work">
                 {claim.ref}
               </Link>
-              <ScrollBox label="the claim" className="mt-1 block">
+              <ScrollBox label="the claim" className="mt-1 block py-1">
                 <Printed of={claim.quantity} />
                 <span className="text-blue">
                   {" = "}

@@ -19,7 +19,7 @@ export function Changes({ changes, previous }: { changes: KeyChanges; previous: 
             className="grid gap-x-6 border-b border-rule py-2.5 sm:grid-cols-[6rem_minmax(0,1fr)] sm:items-center"
           >
             <b className="old-style font-semibold">{after.ref}</b>
-            <ScrollBox label="before and after" className="flex min-w-0 flex-wrap items-center gap-x-4">
+            <ScrollBox label="before and after" className="flex min-w-0 flex-wrap items-center gap-x-4 py-1">
               <del className="text-quiet decoration-red">
                 <Printed claim={before} />
               </del>

@@ -85,7 +85,7 @@ function Claim({ workId, found }: { workId: string; found: Found }) {
         {ref}
       </Link>
       {quantityHtml !== null && claimedHtml !== null ? (
-        <ScrollBox label="the claim" className="flex min-w-0 flex-wrap items-center gap-x-2">
+        <ScrollBox label="the claim" className="flex min-w-0 flex-wrap items-center gap-x-2 py-1">
           <MathHtml html={quantityHtml} />
           <span aria-hidden="true">=</span>
           <span className="sr-only">claimed to equal</span>
