@@ -39,6 +39,14 @@ beforeEach(() => {
   asked = [];
   vi.useFakeTimers();
   vi.stubGlobal("fetch", network);
+  // jsdom lays nothing out, so there is nothing to observe.
+  vi.stubGlobal(
+    "ResizeObserver",
+    class {
+      observe() {}
+      disconnect() {}
+    },
+  );
 });
 afterEach(() => {
   cleanup();
