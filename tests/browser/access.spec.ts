@@ -29,10 +29,12 @@ async function kindsOfPage(page: Page): Promise<string[]> {
 
 // Typeset formulas are checked once, by their own tests; here they would take most of the time.
 const violations = async (page: Page) =>
-  (await new AxeBuilder({ page }).exclude(".katex").withTags(TAGS).analyze()).violations.map(({ id, nodes }) => ({
-    id,
-    where: nodes.map(({ target }) => target.join(" ")).slice(0, 3),
-  }));
+  (await new AxeBuilder({ page }).exclude(".katex").withTags(TAGS).analyze()).violations.map(
+    ({ id, nodes }) => ({
+      id,
+      where: nodes.map(({ target }) => target.join(" ")).slice(0, 3),
+    }),
+  );
 
 test("no page fails the accessibility rules, light or dark, wide or narrow; none scrolls sideways", async ({
   browser,
