@@ -2,7 +2,7 @@ import { audit } from "@/lib/audit";
 import { gate } from "@/lib/auth/gate";
 import type { SessionUser } from "@/lib/auth/user";
 import { AppError, isDuplicate, notFound } from "@/lib/errors";
-import { conventionsAt } from "@/lib/flags/conventions-at";
+import { conventionsAt } from "@/lib/works/conventions-at";
 import { transact } from "@/lib/transact";
 import { Claim, ClaimVersion, Problem } from "@/models";
 import { orbitKeyOf } from "./reading";

@@ -2,7 +2,7 @@ import { Op, type Transaction } from "sequelize";
 import { audit } from "@/lib/audit";
 import type { SessionUser } from "@/lib/auth/user";
 import { isDuplicate } from "@/lib/errors";
-import { conventionsAt } from "@/lib/flags/conventions-at";
+import { conventionsAt } from "@/lib/works/conventions-at";
 import { transact } from "@/lib/transact";
 import { Claim, ClaimVersion, Flag, Settlement } from "@/models";
 import { refTaken } from "./add-claim";

@@ -2,7 +2,7 @@ import { gate } from "@/lib/auth/gate";
 import { can } from "@/lib/auth/permissions";
 import type { SessionUser } from "@/lib/auth/user";
 import { notFound } from "@/lib/errors";
-import { conventionsAt } from "@/lib/flags/conventions-at";
+import { conventionsAt } from "@/lib/works/conventions-at";
 import { proofOf, type Proof } from "@/lib/flags/proof";
 import type { Conventions } from "@/lib/verify/conventions";
 import { Chapter, Claim, ClaimVersion, Finding, Problem, Source, User } from "@/models";

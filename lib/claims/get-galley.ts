@@ -4,7 +4,7 @@ import { can } from "@/lib/auth/permissions";
 import type { SessionUser } from "@/lib/auth/user";
 import { notFound } from "@/lib/errors";
 import { isId } from "@/lib/ids";
-import { conventionsAt } from "@/lib/flags/conventions-at";
+import { conventionsAt } from "@/lib/works/conventions-at";
 import type { Conventions } from "@/lib/verify/conventions";
 import { Chapter, Claim, Finding, Flag, Problem, Run, User } from "@/models";
 import type { Verdict } from "@/models/finding";

@@ -1,7 +1,7 @@
 import type { Transaction } from "sequelize";
 
 import { AppError } from "@/lib/errors";
-import { conventionsAt } from "@/lib/flags/conventions-at";
+import { conventionsAt } from "@/lib/works/conventions-at";
 import { verifyClaim } from "@/lib/verify/verify-claim";
 import { Claim, ClaimVersion, Finding, type Flag, type Work } from "@/models";
 

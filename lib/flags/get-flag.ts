@@ -15,7 +15,7 @@ import { isReal } from "@/lib/symbols/exact";
 import { toDecimal } from "@/lib/symbols/exact-print";
 import type { Conventions } from "@/lib/verify/conventions";
 import { readValue } from "@/lib/verify/read-value";
-import { conventionsAt } from "@/lib/flags/conventions-at";
+import { conventionsAt } from "@/lib/works/conventions-at";
 import {
   Chapter,
   Claim,

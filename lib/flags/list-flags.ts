@@ -2,7 +2,7 @@ import { Op } from "sequelize";
 
 import { gate, visibleChapters } from "@/lib/auth/gate";
 import type { SessionUser } from "@/lib/auth/user";
-import { conventionsAt } from "@/lib/flags/conventions-at";
+import { conventionsAt } from "@/lib/works/conventions-at";
 import { flagIncludes, flagOrder, flagWhere } from "@/lib/flags/flag-list-query";
 import { FLAGS_PER_PAGE, LAST_PAGE, type FlagQuery } from "@/lib/flags/flag-query";
 import { toFlagRow, type FlagRow } from "@/lib/flags/flag-row";

@@ -2,7 +2,7 @@ import { audit } from "@/lib/audit";
 import { gate } from "@/lib/auth/gate";
 import type { SessionUser } from "@/lib/auth/user";
 import { AppError, isDuplicate } from "@/lib/errors";
-import { conventionsAt } from "@/lib/flags/conventions-at";
+import { conventionsAt } from "@/lib/works/conventions-at";
 import { composeKey } from "@/lib/keys/compose-key";
 import { loadClaimStates } from "@/lib/keys/key-claims";
 import { canonicalJson, sha256 } from "@/lib/keys/key-content";

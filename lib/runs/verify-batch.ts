@@ -5,7 +5,7 @@ import { ringAll } from "@/lib/jobs/queue";
 import type { Payload } from "@/lib/jobs/definitions";
 import type { Job } from "@/lib/jobs/work";
 import { transact } from "@/lib/transact";
-import { conventionsOf } from "./conventions";
+import { conventionsAt } from "@/lib/works/conventions-at";
 import { finishKey, isGoing } from "./going";
 import type { Task } from "./judge";
 import type { Result, Verifier } from "./verifier";
@@ -31,7 +31,7 @@ export async function verifyBatch(
   if (!run || !isGoing(run.state)) return;
   if (run.state === "queued")
     await Run.update({ state: "running", startedAt: new Date() }, { where: { id: runId, state: "queued" } });
-  const conventions = await conventionsOf(run.workId, run.conventionsVersion);
+  const conventions = await conventionsAt(run.workId, run.conventionsVersion);
   for (;;) {
     job.goOn();
     const chunk = await nextChunk(runId, batch);

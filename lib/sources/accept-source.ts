@@ -6,7 +6,7 @@ import type { SessionUser } from "@/lib/auth/user";
 import { keyOf } from "@/lib/claims/text";
 import { supersedeFlags } from "@/lib/claims/supersede-flag";
 import { AppError, isDuplicate, notFound } from "@/lib/errors";
-import { conventionsAt } from "@/lib/flags/conventions-at";
+import { conventionsAt } from "@/lib/works/conventions-at";
 import { transact } from "@/lib/transact";
 import { Chapter, Claim, ClaimVersion, Problem, Source, User } from "@/models";
 import { findSource } from "./find-source";

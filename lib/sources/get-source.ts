@@ -1,7 +1,7 @@
 import type { SessionUser } from "@/lib/auth/user";
 import { readClaim, type ClaimReading } from "@/lib/claims/reading";
 import { notFound } from "@/lib/errors";
-import { conventionsAt } from "@/lib/flags/conventions-at";
+import { conventionsAt } from "@/lib/works/conventions-at";
 import type { Conventions } from "@/lib/verify/conventions";
 import { Chapter, User, type Source } from "@/models";
 import { findSource } from "./find-source";
