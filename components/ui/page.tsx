@@ -24,7 +24,7 @@ export type Crumb = { label: ReactNode; href?: string };
 /** Where this page stands: work, chapter, problem. The last has no address. */
 export function Crumbs({ trail }: { trail: readonly Crumb[] }) {
   return (
-    <nav aria-label="Where you are" className="small-caps text-base text-quiet">
+    <nav aria-label="Where you are" className="font-ui text-sm text-quiet">
       <ol className="flex flex-wrap items-baseline gap-x-2.5">
         {trail.map((crumb, i) => (
           <Fragment key={i}>

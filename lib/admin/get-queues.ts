@@ -1,7 +1,8 @@
+import { z } from "zod";
+
 import type { SessionUser } from "@/lib/auth/user";
 import { health, type Health } from "@/lib/health";
 import { listTroubled, outboxDepth, type OutboxView } from "@/lib/jobs/dead-letters";
-import { MailPayload } from "@/lib/jobs/definitions";
 import { Outbox } from "@/models";
 import type { OutboxState } from "@/models/outbox";
 import { administer } from "./administer";
@@ -27,8 +28,11 @@ export async function getQueues(user: SessionUser): Promise<Queues> {
   return { depth, health: state, troubled, mail: rows.flatMap(outgoing) };
 }
 
+/** What is left of a mail once it was sent, and part of it before. */
+const Envelope = z.object({ to: z.string(), template: z.string() });
+
 function outgoing(row: Outbox): OutgoingMail[] {
-  const payload = MailPayload.safeParse(row.payload);
+  const payload = Envelope.safeParse(row.payload);
   if (!payload.success) return [];
   const { to, template } = payload.data;
   return [{ id: row.id, to, template, state: row.state, at: row.createdAt.toISOString() }];

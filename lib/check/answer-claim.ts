@@ -2,7 +2,7 @@ import { z } from "zod";
 import { ConventionsInput } from "@/lib/key-files/key-schema";
 import { withoutHoles } from "@/lib/key-files/json";
 import { TooCostly } from "@/lib/symbols/failures";
-import { evidence, type Evidence } from "@/lib/symbols/quantity";
+import { LIMITS, evidence, type Evidence } from "@/lib/symbols/quantity";
 import { findingView, type FindingView } from "@/lib/typeset/finding-view";
 import { typeset } from "@/lib/typeset/typeset";
 import { BUDGET } from "@/lib/verify/budget";
@@ -39,7 +39,7 @@ export function answerClaim({
   });
   const reason =
     finding.verdict === "undecided" && finding.errors.length === 0
-      ? `${finding.reason} A run of the chapter works out larger ones.`
+      ? `${finding.reason} A run of a chapter works them out up to ${LIMITS.largestJ.toLocaleString("en-GB")}.`
       : finding.reason;
   const view = findingView({ ...finding, reason }, evidenceFor(finding, conventions));
   // The quantity is shown as read even while its value cannot be: it may not be written yet.

@@ -1,3 +1,4 @@
+import { TooCostly } from "@/lib/symbols/failures";
 import { orbit } from "@/lib/symbols/quantity";
 import type { Conventions } from "@/lib/verify/conventions";
 import { readQuantity } from "@/lib/verify/read-quantity";
@@ -23,8 +24,14 @@ export function readClaim(quantity: string, claimed: string, conventions: Conven
   return { quantityLatex: left.ok ? left.latex : null, claimedLatex: right.ok ? right.latex : null, errors };
 }
 
-/** The key under which the symbol stands with its relatives; null when the quantity cannot be read. */
+/** The key under which the symbol stands with its relatives; null when it cannot be read or is past the engine's limit. */
 export function orbitKeyOf(quantity: string, conventions: Conventions): string | null {
   const read = readQuantity(quantity, conventions);
-  return read.ok ? orbit(read.quantity).key : null;
+  if (!read.ok) return null;
+  try {
+    return orbit(read.quantity).key;
+  } catch (error) {
+    if (error instanceof TooCostly) return null;
+    throw error;
+  }
 }

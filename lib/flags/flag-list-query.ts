@@ -1,7 +1,7 @@
 import { Op, type Order, type WhereOptions } from "sequelize";
 
 import type { FlagQuery } from "@/lib/flags/flag-query";
-import { Chapter, Claim, Finding, User } from "@/models";
+import { Chapter, Claim, Finding, Problem, User } from "@/models";
 
 /** The `include` of every list of flags: plain columns only, so that paging stays in the database. */
 export function flagIncludes(query: FlagQuery) {
@@ -17,6 +17,7 @@ export function flagIncludes(query: FlagQuery) {
       as: "claim",
       attributes: ["id", "ref", "quantity", "claimed", "position", "current"],
       required: true,
+      include: [{ model: Problem, as: "problem", attributes: ["id", "position"], required: true }],
     },
     {
       model: Finding,
@@ -46,12 +47,13 @@ export function flagWhere(query: FlagQuery, userId: string): WhereOptions {
 /** Sorting by a column that is not unique ends with the place in the work, then the id, so that paging is stable. */
 export function flagOrder({ sort, order }: FlagQuery): Order {
   const way = order === "ascending" ? "ASC" : "DESC";
-  const place: [string, string, string][] = [
+  const place: string[][] = [
     ["chapter", "number", way],
+    ["claim", "problem", "position", way],
     ["claim", "position", way],
     ["claim", "ref", way],
   ];
-  const first: Record<FlagQuery["sort"], (string | [string, string] | [string, string, string])[]> = {
+  const first: Record<FlagQuery["sort"], string[][]> = {
     place: [],
     // The oldest flag has the greatest age.
     age: [["createdAt", order === "ascending" ? "DESC" : "ASC"]],

@@ -130,7 +130,7 @@ function valueOf(text: string, conventions: Conventions) {
   const read = readValue(text, conventions);
   if (!read.ok) return { text, latex: null, decimal: null };
   const { exact } = read.value;
-  return { text, latex: read.latex, decimal: isReal(exact) ? toDecimal(exact, 8) : null };
+  return { text, latex: read.latex, decimal: isReal(exact) ? toDecimal(exact, 20) : null };
 }
 
 /** What this person may do with the flag, and in one sentence why they may not settle it. */

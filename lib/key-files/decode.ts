@@ -88,8 +88,17 @@ function firstBadByte(bytes: Uint8Array): number {
     if (good(middle)) low = middle;
     else high = middle;
   }
+  // The byte that breaks it may be a good one after the bad: go back to where its character would begin.
+  for (let back = 1; back <= 3 && back <= low; back += 1) {
+    const lead = bytes[low - back] ?? 0;
+    if (lead < 0x80) break;
+    if (lead >= 0xc0) return needs(lead) > back ? low - back : low;
+  }
   return low;
 }
+
+/** How many bytes a character takes that begins with this one. */
+const needs = (lead: number) => (lead >= 0xf0 ? 4 : lead >= 0xe0 ? 3 : 2);
 
 /** Line and column (both from 1, columns in UTF-16 units) of an offset. */
 export function placeOf(text: string, offset: number): { line: number; column: number } {

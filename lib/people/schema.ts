@@ -66,7 +66,7 @@ export const ROLE_WORDS: Record<(typeof ROLES)[number], { name: string; does: st
   },
   referee: {
     name: "referee",
-    does: "An outside second reader: settles the flags assigned to them, in the chapters chosen here.",
+    does: "An outside second reader: settles the flags assigned to them, in the chapters chosen for them.",
   },
   production: {
     name: "production",

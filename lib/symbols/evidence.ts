@@ -33,7 +33,7 @@ const FORMULA: Record<Kind, { latex: string; source: string }> = {
 const CONVENTIONS: Record<Kind, string[]> = {
   "3j": [
     "Condon-Shortley phase",
-    "3j symbol of Wigner: (−1)^(j1−j2−m3)/√(2j3+1) times the Clebsch-Gordan coefficient",
+    "3j symbol of Wigner: (−1)^(j1−j2−m3)/√(2j3+1) times the Clebsch-Gordan coefficient with M = −m3",
   ],
   cg: ["Condon-Shortley phase: ⟨j1 j1 j2 J−j1|J J⟩ is positive", "j1 is coupled first, then j2"],
 };

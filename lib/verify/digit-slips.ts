@@ -50,7 +50,8 @@ function inDecimal(claimed: ClaimedValue & { kind: "decimal" }, truth: Exact): D
   for (const meant of repairs(decimals)) {
     tried += 1;
     const repaired = `${whole.replace(/^0+$/, "")}.${meant}`;
-    if (meant !== "" && size(meant.length) === repaired) {
+    // A repair to zeros alone would agree with any small value, and so says nothing.
+    if (/[1-9]/.test(meant + whole) && size(meant.length) === repaired) {
       return { typed: leaf.text, meant: `${whole}.${meant}`, tried };
     }
   }

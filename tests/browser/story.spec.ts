@@ -155,7 +155,8 @@ test("a chapter goes from a form and a file to a frozen key", async ({ browser }
     await second.getByRole("link", { name: ref }).first().click();
     await expect(second.getByRole("heading", { level: 1 })).toContainText(ref);
     await second.getByRole("radio", { name: new RegExp(`^${word}`) }).check({ force: true });
-    for (const [label, words] of Object.entries(fill)) await second.getByRole("textbox", { name: label }).fill(words);
+    for (const [label, words] of Object.entries(fill))
+      await second.getByRole("textbox", { name: label }).fill(words);
     await second.getByRole("button", { name: `Settle: ${word}` }).click();
     await expect(second.getByText(`${ref} is settled: ${word}.`)).toBeVisible();
   };

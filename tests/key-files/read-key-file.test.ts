@@ -159,6 +159,17 @@ describe("a CSV key that cannot be used", () => {
     ]);
   });
 
+  it("names the lead byte, not the good byte after it that shows it to be wrong", () => {
+    const latin = Buffer.concat([bytes(`${HEADER}1,(1 1 2; 0 0 0),`), Buffer.from([0xe9]), bytes("\n")]);
+    expect(readKeyFile("key.csv", latin).errors).toEqual([
+      {
+        line: 2,
+        column: 18,
+        says: "The byte E9 here is not UTF-8; the file is probably in Latin-1 or a Windows code page. Save it as UTF-8.",
+      },
+    ]);
+  });
+
   it("is refused when it is too large", () => {
     const key = readKeyFile("key.csv", new Uint8Array(2 * 1024 * 1024 + 1).fill(0x61));
     expect(key.errors[0]?.says).toMatch(/at most 2,097,152 \(2 MiB\)/);

@@ -297,3 +297,14 @@ describe("claims against each other", () => {
     });
   });
 });
+
+describe("a small value", () => {
+  it("is not explained by a digit that leaves nothing but zeros", () => {
+    const finding = verifyClaim(
+      { ref: "1", quantity: "(200 200 200; 0 0 0)", claimed: "0.01" },
+      DEFAULT_CONVENTIONS,
+    );
+    expect(finding.verdict).toBe("discrepant");
+    expect(finding.slips.flatMap(({ causes }) => causes)).not.toContain("digit-slip");
+  });
+});

@@ -90,6 +90,13 @@ describe("adding a claim", () => {
     ).toBe(1);
   });
 
+  it("saves a symbol past the engine's limit too, without an orbit", async () => {
+    const problem = await buildProblem({ chapterId: chapter.id });
+    const huge = text("huge(a)", { quantity: "(6000 6000 2; 0 0 0)", claimed: "1/7" });
+    const { id } = await addClaim({ workId: work.id, problemId: problem.id, ...huge }, author);
+    expect((await Claim.findByPk(id, { rejectOnEmpty: true })).orbitKey).toBeNull();
+  });
+
   it("gives symbols that a symmetry joins the same orbit, a 3j and its CG coefficient among them", async () => {
     const problem = await buildProblem({ chapterId: chapter.id });
     const made = await Promise.all(

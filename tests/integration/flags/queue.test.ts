@@ -172,7 +172,7 @@ describe("the page of a flag", () => {
     await settleFlag(settling(flag, "correct", { reason: undefined }), here.second);
     const view = await getFlag(here.work.id, flag.id, ask({ state: "all" }), here.lead);
     expect(view).toMatchObject({
-      claimed: { text: "sqrt(2)/15", decimal: "0.094280904" },
+      claimed: { text: "sqrt(2)/15", decimal: "0.094280904158206336587" },
       exact: { text: "sqrt(30)/15" },
       state: "settled",
       neighbours: { position: 1, of: 1, previous: null, next: null },

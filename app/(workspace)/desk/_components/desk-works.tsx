@@ -38,8 +38,9 @@ export function DeskWorks({ works }: { works: readonly DeskWork[] }) {
   );
 }
 
-function Standing({ work: { counts, openFlags, lastKey } }: { work: DeskWork }) {
-  const key = lastKey === null ? "no key frozen yet" : `frozen key ${lastKey}`;
+function Standing({ work: { counts, openFlags, lastKey, role } }: { work: DeskWork }) {
+  // Keys are none of a referee's business, so nothing is said of them.
+  const key = role === "referee" ? null : lastKey === null ? "no key frozen yet" : `frozen key ${lastKey}`;
   if (counts === null) return <p className="font-ui text-sm text-quiet">{key}</p>;
   return (
     <div className="mt-auto grid gap-1 border-t border-rule pt-3 font-ui text-sm">
@@ -56,7 +57,8 @@ function Standing({ work: { counts, openFlags, lastKey } }: { work: DeskWork }) 
         {counts.total === 0 ? <li className="text-quiet">no claims yet</li> : null}
       </ul>
       <p className="text-quiet">
-        {openFlags ? `${openFlags} open ${openFlags === 1 ? "flag" : "flags"}` : "no open flag"}; {key}
+        {openFlags ? `${openFlags} open ${openFlags === 1 ? "flag" : "flags"}` : "no open flag"}
+        {key === null ? null : `; ${key}`}
       </p>
     </div>
   );

@@ -30,7 +30,7 @@ export function Comparison({ flag }: { flag: FlagView }) {
             label={`as claimed by ${flag.claimant.name}`}
             typed={claimed.text}
             latex={claimed.latex}
-            decimal={claimed.decimal}
+            decimal={claimed.decimal === null ? null : shorten(claimed.decimal)}
           />
           {exact ? (
             <ValueLine
@@ -110,10 +110,14 @@ function ValueLine({
 }
 
 /** Signs stand in a column of their own, so that a lost one is seen at once. */
-const aligned = (decimal: string) => (decimal.startsWith("-") ? `− ${decimal.slice(1)}` : `+ ${decimal}`);
+function aligned(decimal: string): string {
+  if (decimal.startsWith("-")) return `− ${decimal.slice(1)}`;
+  return /[1-9]/.test(decimal) ? `+ ${decimal}` : decimal;
+}
 
 /** Eight digits are enough to see a difference; all twenty stand in the evidence. */
-function shorten(decimal: string): string {
+function shorten(full: string): string {
+  const decimal = full.includes(".") && !/e/i.test(full) ? full.replace(/\.?0+$/, "") : full;
   return decimal.length > 11 && !/e/i.test(decimal)
     ? decimal.slice(0, decimal.startsWith("-") ? 11 : 10) + "…"
     : decimal;

@@ -25,7 +25,7 @@ const REASON = {
   correct: { label: "Note for the claimant", hint: "Only if there is something to add.", optional: true },
   stet: {
     label: "Reason",
-    hint: "Why the printed value stands although the recomputed one differs. It is printed in the key.",
+    hint: "Why the printed value stands although the recomputed one differs. At least ten characters; it is printed in the key.",
     optional: false,
   },
   reword: {
@@ -121,7 +121,7 @@ export function SettleForm(view: SettleView) {
             value: "stet",
             label: "stet",
             mark: <Mark name="stet" />,
-            hint: "The claimed value stands. Name the convention or the reason that it relies on.",
+            hint: "The claimed value stands. Name the convention that it relies on, and the reason.",
           },
           {
             value: "reword",
