@@ -156,7 +156,10 @@ describe("POST /api/check", () => {
   it("sends large symbols to a run", async () => {
     const response = await ask({ quantity: "(500 500 500; 0 0 0)", claimed: "1" });
     expect(await response.json()).toMatchObject({
-      finding: { verdict: "undecided", reason: expect.stringContaining("A run of a chapter works them out up to 5,000") as string },
+      finding: {
+        verdict: "undecided",
+        reason: expect.stringContaining("A run of a chapter works them out up to 5,000") as string,
+      },
     });
   });
 
