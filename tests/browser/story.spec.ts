@@ -1,6 +1,7 @@
 import { createHash } from "node:crypto";
 import { readFile } from "node:fs/promises";
 import { expect, test, type Page } from "@playwright/test";
+import canonicalize from "canonicalize";
 
 import { keyOfThirty } from "./support/key-of-thirty";
 import { linkIn, mailsTo, waitForMail } from "./support/mail";
@@ -216,9 +217,10 @@ test("a chapter goes from a form and a file to a frozen key", async ({ browser }
       ]);
       bodies[format] = await readFile(await download.path(), "utf8");
     }
-    const json = JSON.parse(bodies.json!) as { sha256?: string };
-    expect(createHash("sha256").update(bodies.json!).digest("hex")).toHaveLength(64);
-    expect(JSON.stringify(json)).toContain(TITLE);
+    const { sha256, export: made, ...content } = JSON.parse(bodies.json!) as Record<string, unknown>;
+    expect(createHash("sha256").update(canonicalize(content)!).digest("hex")).toBe(sha256);
+    expect(JSON.stringify(made)).toContain(PRODUCTION.name);
+    expect(JSON.stringify(content)).toContain(TITLE);
     // Thirty-one claims: one was withdrawn. The corrected value stands where the wrong one did.
     for (const { ref } of key.rows) expect(bodies.csv!.includes(`${ref},`), ref).toBe(ref !== key.wrong[4]);
     expect(bodies.csv).toContain("4.1(a),");
